@@ -1,0 +1,83 @@
+package balance
+
+import "math"
+
+// omega damps plain substitution. One half converges for every law whose heat
+// grows slower than the fourth power of the temperature difference: the factor
+// per step is |1 - m/2| with 0 < m < 4 the local exponent of the law.
+const omega = 0.5
+
+// SolveDamped finds the temperatures by plain damped substitution: secant
+// conductances at the present temperatures, one linear solve, half the change.
+// It shares nothing with Solve but the laws, starts elsewhere, and serves as
+// the independent check.
+func (b *Balance) SolveDamped() Solution {
+	unknown := b.unknowns()
+	s := b.newState()
+	if m := b.tooCold(unknown); m != "" {
+		return b.ending(Impossible, m, s, nil)
+	}
+	if m := b.noWayOut(); m != "" {
+		return b.ending(Impossible, m, s, nil)
+	}
+	for _, n := range unknown {
+		s.excess[n] = 1
+	}
+	b.evaluate(s)
+	steps := b.damped(s, unknown, 4*maxSteps)
+	last := Step{Change: math.Inf(1)}
+	if len(steps) > 0 {
+		last = steps[len(steps)-1]
+	}
+	return b.conclude(s, steps, len(unknown) == 0 || last.Change <= settled*b.largest(s, unknown))
+}
+
+// settled ends damped substitution: change of a step over the largest excess.
+const settled = 1e-12
+
+func (b *Balance) largest(s *state, unknown []Node) float64 {
+	most := 0.0
+	for _, n := range unknown {
+		most = math.Max(most, math.Abs(s.excess[n]))
+	}
+	return most
+}
+
+// damped iterates in place until the temperatures settle.
+func (b *Balance) damped(s *state, unknown []Node, most int) []Step {
+	var steps []Step
+	g := make([]float64, len(b.Links))
+	for n := 1; n <= most; n++ {
+		b.secants(s, g)
+		x, ok := b.linear(g, unknown)
+		if !ok {
+			return steps
+		}
+		_, rest := b.worst(s)
+		change := 0.0
+		for i, u := range unknown {
+			next := b.notTooFar(s.excess[u], omega*(x[i]-s.excess[u]))
+			change = math.Max(change, math.Abs(next-s.excess[u]))
+			s.excess[u] = next
+		}
+		b.evaluate(s)
+		steps = append(steps, Step{N: n, Closure: rest, Change: change})
+		if change <= settled*b.largest(s, unknown) {
+			break
+		}
+	}
+	return steps
+}
+
+// secants are the conductances heat over temperature difference; without a
+// difference the slope over a tiny one stands in.
+func (b *Balance) secants(s *state, g []float64) {
+	for i, l := range b.Links {
+		dt := s.excess[l.From] - s.excess[l.To]
+		if tiny := 1e-12 * b.ref; math.Abs(dt) < tiny {
+			g[i] = math.Abs(b.through(l, s, tiny, 0)) / tiny
+			continue
+		}
+		g[i] = s.heat[i] / dt
+	}
+}
