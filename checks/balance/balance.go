@@ -64,9 +64,13 @@ func (b *Balance) Connect(from, to Node, by string, law Law) {
 	b.Links = append(b.Links, Link{From: from, To: to, By: by, law: law})
 }
 
-// state is one set of temperatures under trial.
+// state is one set of temperatures under trial. The excess of a node is the sum
+// excess + low: low holds the digits that no longer fit. A sheet of metal
+// carries watts at a difference of a millionth of a kelvin, so its balance
+// cannot close on the digits of one number.
 type state struct {
 	excess []float64 // of every node
+	low    []float64
 	heat   []float64 // through every link
 	rest   []float64 // W left over at every node: sources plus heat in minus heat out
 }
@@ -74,6 +78,7 @@ type state struct {
 func (b *Balance) newState() *state {
 	s := &state{
 		excess: make([]float64, len(b.nodes)),
+		low:    make([]float64, len(b.nodes)),
 		heat:   make([]float64, len(b.Links)),
 		rest:   make([]float64, len(b.nodes)),
 	}
@@ -85,6 +90,7 @@ func (b *Balance) newState() *state {
 
 func (s *state) copyFrom(o *state) {
 	copy(s.excess, o.excess)
+	copy(s.low, o.low)
 	copy(s.heat, o.heat)
 	copy(s.rest, o.rest)
 }
@@ -92,7 +98,16 @@ func (s *state) copyFrom(o *state) {
 // through evaluates a link with its ends shifted by d1 and d2 kelvin.
 func (b *Balance) through(l Link, s *state, d1, d2 float64) float64 {
 	x1, x2 := s.excess[l.From], s.excess[l.To]
-	return l.law((x1-x2)+(d1-d2), b.ref+x1+d1, b.ref+x2+d2)
+	return l.law((x1-x2)+(s.low[l.From]-s.low[l.To])+(d1-d2), b.ref+x1+d1, b.ref+x2+d2)
+}
+
+// move adds dx to the excess of a node without losing its last digits (exact
+// sum of two numbers: Knuth, The Art of Computer Programming, vol. 2, 4.2.2).
+func (s *state) move(n Node, dx float64) {
+	x, dx := s.excess[n], dx+s.low[n]
+	sum := x + dx
+	back := sum - x
+	s.excess[n], s.low[n] = sum, (x-(sum-back))+(dx-back)
 }
 
 // evaluate fills heat and rest from the excess temperatures.
@@ -132,14 +147,13 @@ func (b *Balance) worst(s *state) (Node, float64) {
 	return at, most
 }
 
-// roundoff is the heat at a node that the last bit of the temperatures stands
-// for; no iteration can close a node any better.
-func (b *Balance) roundoff(s *state, slopes [][2]float64) []float64 {
+// roundoff is the heat at a node that the last bit of its flows stands for; no
+// iteration can close a node any better.
+func (b *Balance) roundoff(s *state) []float64 {
 	const eps = 2.3e-16
 	r := make([]float64, len(b.nodes))
 	for i, l := range b.Links {
-		x := math.Abs(s.excess[l.From]) + math.Abs(s.excess[l.To])
-		w := 4 * eps * (x*math.Max(math.Abs(slopes[i][0]), math.Abs(slopes[i][1])) + math.Abs(s.heat[i]))
+		w := 8 * eps * math.Abs(s.heat[i])
 		r[l.From] += w
 		r[l.To] += w
 	}

@@ -93,13 +93,13 @@ func randomNetwork(t *rapid.T) *Balance {
 	air := b.Fixed("air", ref)
 	sky := b.Fixed("sky", ref+rapid.Float64Range(-60, 60).Draw(t, "sky"))
 	core := b.Unknown("core")
-	b.Source(core, math.Pow(10, rapid.Float64Range(-6, 5).Draw(t, "log W")))
+	b.Source(core, math.Pow(10, rapid.Float64Range(-6, 4).Draw(t, "log W")))
 	for i := range rapid.IntRange(1, 6).Draw(t, "walls") {
 		in, out := b.Unknown(fmt.Sprint("in", i)), b.Unknown(fmt.Sprint("out", i))
 		b.Source(out, rapid.Float64Range(0, 800).Draw(t, "sun"))
 		b.Connect(core, in, "convection", power(rapid.Float64Range(0.1, 3).Draw(t, "ci"), 0.25))
 		b.Connect(core, in, "radiation", radiation(rapid.Float64Range(0, 1).Draw(t, "ei")))
-		b.Connect(in, out, "conduction", conduction(math.Pow(10, rapid.Float64Range(-1, 5).Draw(t, "k"))))
+		b.Connect(in, out, "conduction", conduction(math.Pow(10, rapid.Float64Range(0, 5).Draw(t, "k"))))
 		b.Connect(out, air, "convection", power(rapid.Float64Range(0.1, 3).Draw(t, "co"), 1.0/3))
 		b.Connect(out, sky, "radiation", radiation(rapid.Float64Range(0, 1).Draw(t, "eo")))
 	}

@@ -285,11 +285,11 @@ func (b *Balance) accelerated(s *state, unknown []Node) ([]Step, bool) {
 	br := newBracket(-b.ref * (1 - coldest))
 	trial := b.newState()
 	for n := 1; n <= maxSteps; n++ {
-		slopes := b.slopes(s)
 		_, rest := b.worst(s)
-		if b.closed(s, slopes) {
+		if b.closed(s) {
 			return append(steps, Step{N: n, Closure: rest}), true
 		}
+		slopes := b.slopes(s)
 		dx, ok := b.newton(s, slopes, unknown)
 		if len(unknown) == 1 {
 			br.tighten(s.excess[unknown[0]], s.rest[unknown[0]])
@@ -308,10 +308,10 @@ func (b *Balance) accelerated(s *state, unknown []Node) ([]Step, bool) {
 }
 
 // closed tells whether every unknown node balances to the tolerance or to the
-// last bit of its temperatures.
-func (b *Balance) closed(s *state, slopes [][2]float64) bool {
+// last bit of its flows.
+func (b *Balance) closed(s *state) bool {
 	limit := tolerance * b.scale(s)
-	noise := b.roundoff(s, slopes)
+	noise := b.roundoff(s)
 	for i, n := range b.nodes {
 		if !n.fixed && math.Abs(s.rest[i]) > limit && math.Abs(s.rest[i]) > noise[i] {
 			return false
@@ -329,8 +329,9 @@ func (b *Balance) advance(s, trial *state, unknown []Node, dx []float64) float64
 		trial.copyFrom(s)
 		change := 0.0
 		for i, n := range unknown {
-			trial.excess[n] = b.notTooFar(s.excess[n], part*dx[i])
-			change = math.Max(change, math.Abs(trial.excess[n]-s.excess[n]))
+			step := b.notTooFar(s.excess[n], part*dx[i])
+			trial.move(n, step)
+			change = math.Max(change, math.Abs(step))
 		}
 		b.evaluate(trial)
 		if len(unknown) == 1 || norm(trial, unknown) < before {
@@ -341,11 +342,11 @@ func (b *Balance) advance(s, trial *state, unknown []Node, dx []float64) float64
 	return 0
 }
 
-// notTooFar lets an absolute temperature fall to a quarter in one step, no
-// further: laws are only known to be smooth well above absolute zero.
+// notTooFar shortens a step so that the absolute temperature falls to a quarter
+// at most: laws are only known to be smooth well above absolute zero.
 func (b *Balance) notTooFar(excess, dx float64) float64 {
-	lowest := (b.ref+excess)/4 - b.ref
-	return b.warmEnough(math.Max(excess+dx, lowest))
+	lowest := math.Max((b.ref+excess)/4, coldest*b.ref)
+	return math.Max(dx, lowest-(b.ref+excess))
 }
 
 func norm(s *state, unknown []Node) float64 {

@@ -1,0 +1,244 @@
+package checks
+
+import (
+	"fmt"
+	"math"
+	"strings"
+
+	"stillair/checks/casefile"
+	"stillair/checks/limit"
+)
+
+// criterion is one limit made ready for one load case.
+type criterion struct {
+	text, source, why, confidence string
+	k                             float64 // K
+	lower, touch, rise            bool
+	steps                         []string
+}
+
+// judge applies every limit of the case that the purpose of the load case
+// calls for.
+func judge(c casefile.Case, temps []Temp, effects []Effect, dew float64) []Judged {
+	var rows []Judged
+	for _, l := range c.Limits {
+		if !applies(l, c) {
+			continue
+		}
+		k := makeCriterion(l, c, dew)
+		for _, t := range temps {
+			if meant(l.At, t) {
+				rows = append(rows, k.judge(t, effects))
+			}
+		}
+	}
+	return rows
+}
+
+// meant tells whether a limit at the place named is about this temperature.
+func meant(at string, t Temp) bool {
+	if at == "any face" {
+		return t.Kind == "outer surface"
+	}
+	return at == t.At
+}
+
+// applies tells whether a limit is judged in a load case of this purpose. A
+// load case without a purpose serves touch and component limits, and
+// condensation when the humidity is given.
+func applies(l casefile.Limit, c casefile.Case) bool {
+	p := c.Load.Purpose
+	switch {
+	case p == "loss":
+		return false
+	case l.NoCondensation:
+		return c.Surroundings.Humidity.Set && (p == "" || p == "condensation")
+	case l.Touch != "":
+		return p == "" || p == "touch"
+	case l.Least.Set:
+		return p == "" || p == "component" || p == "condensation"
+	}
+	return p != "condensation"
+}
+
+func makeCriterion(l casefile.Limit, c casefile.Case, dew float64) criterion {
+	switch {
+	case l.NoCondensation:
+		return dewCriterion(c, dew)
+	case l.Touch != "":
+		return touchCriterion(l)
+	case l.Rule != "":
+		return ruleCriterion(l, c)
+	}
+	return projectCriterion(l, c)
+}
+
+func projectCriterion(l casefile.Limit, c casefile.Case) criterion {
+	k := criterion{source: l.Source, why: l.Why}
+	if k.source == "" {
+		k.source = "project limit: " + l.Why
+	}
+	switch {
+	case l.Most.Set:
+		k.k, k.text = l.Most.SI, "at most "+l.Most.Typed
+	case l.Least.Set:
+		k.k, k.text, k.lower = l.Least.SI, "at least "+l.Least.Typed, true
+	default:
+		k.k, k.text, k.rise = c.Surroundings.Air.SI+l.Rise.SI, fmt.Sprintf("rise over the air of at most %s", l.Rise.Typed), true
+	}
+	k.touch = l.At != "inside air" && l.At != "upper zone" && l.At != "contents" && !k.lower
+	return k
+}
+
+func touchCriterion(l casefile.Limit) criterion {
+	t, err := limit.Touch(l.Touch, l.Contact.SI)
+	k := criterion{
+		text: fmt.Sprintf("burn threshold, %s, contact %s", l.Touch, l.Contact.Typed), source: t.Source,
+		why: l.Why, confidence: t.Confidence, k: t.K, touch: true, steps: t.Steps,
+	}
+	if err != nil { // the reader has refused such a limit already
+		k.source = err.Error()
+	}
+	return k
+}
+
+func ruleCriterion(l casefile.Limit, c casefile.Case) criterion {
+	e, _ := limit.Find(l.Rule)
+	k, _ := e.Kelvin(c.Surroundings.Air.SI)
+	return criterion{
+		text: e.Text(), source: fmt.Sprintf("%s; quoted from %s", e.Standard, e.Source),
+		why: l.Why, confidence: e.Confidence, k: k, rise: e.IsRise(), touch: true,
+	}
+}
+
+func dewCriterion(c casefile.Case, dew float64) criterion {
+	s := c.Surroundings
+	return criterion{
+		text:   fmt.Sprintf("no condensation: above the dew point of air at %s and %s relative humidity", s.Air.Typed, s.Humidity.Typed),
+		source: dewPointSource, k: dew, lower: true,
+	}
+}
+
+// judge compares one temperature by the four-way rule. The uncertainty is the
+// one on the side of the limit. A rise is not blamed for the uncertainty of
+// the air it is counted from.
+func (k criterion) judge(t Temp, effects []Effect) Judged {
+	skip := ""
+	if k.rise {
+		skip = ofAir
+	}
+	plus, minus := combine(effects, t.At, skip)
+	margin, u := k.k-t.K, plus
+	if k.lower {
+		margin, u = t.K-k.k, minus
+	}
+	word, p := limit.Judge(t.K, k.k, u, k.lower)
+	return Judged{
+		At: t.At, Limit: k.text, Source: k.source, Why: k.why, Confidence: k.confidence, LimitK: k.k, ValueK: t.K,
+		MarginK: margin, Uncertainty: u, Verdict: Verdict(word), Touch: k.touch, Lower: k.lower, Conformance: p, Steps: k.steps,
+	}
+}
+
+var severity = map[Verdict]int{None: 0, Pass: 1, ConditionalPass: 2, ConditionalFail: 3, Fail: 4, NoResult: 5}
+
+// worse returns the graver of two verdicts.
+func worse(a, b Verdict) Verdict {
+	if severity[b] > severity[a] {
+		return b
+	}
+	return a
+}
+
+// govern marks, over all load cases, the row with the least margin for every
+// limit, the highest temperature of every place, and the load case that decides.
+func govern(o *Outcome) {
+	markTemps(o)
+	best := map[string]*Judged{}
+	var order []string
+	loadOf := map[*Judged]int{}
+	for i := range o.Loads {
+		for j := range o.Loads[i].Verdicts {
+			v := &o.Loads[i].Verdicts[j]
+			loadOf[v] = i
+			key := limitKey(*v)
+			if best[key] == nil {
+				order = append(order, key)
+			}
+			if best[key] == nil || v.MarginK < best[key].MarginK {
+				best[key] = v
+			}
+		}
+	}
+	var decisive *Judged
+	for _, key := range order {
+		v := best[key]
+		v.Governing = true
+		if decisive == nil || graver(*v, *decisive) {
+			decisive = v
+		}
+	}
+	o.choose(decisive, loadOf)
+}
+
+// limitKey names a limit apart from the place and load case it is applied to.
+func limitKey(v Judged) string {
+	text := v.Limit
+	if i := strings.Index(text, ": above the dew point"); i > 0 {
+		text = text[:i]
+	}
+	return text + "|" + v.Source
+}
+
+func graver(a, b Judged) bool {
+	if severity[a.Verdict] != severity[b.Verdict] {
+		return severity[a.Verdict] > severity[b.Verdict]
+	}
+	return a.MarginK < b.MarginK
+}
+
+func markTemps(o *Outcome) {
+	hottest := map[string]*Temp{}
+	for i := range o.Loads {
+		if o.Loads[i].Status != Converged {
+			continue
+		}
+		for j := range o.Loads[i].Temps {
+			t := &o.Loads[i].Temps[j]
+			if hottest[t.At] == nil || t.K > hottest[t.At].K {
+				hottest[t.At] = t
+			}
+		}
+	}
+	for _, t := range hottest {
+		t.Governing = true
+	}
+}
+
+// choose sets the verdict of the whole and the load case that decides it: the
+// one of the decisive limit; without limits the one with the hottest core.
+func (o *Outcome) choose(decisive *Judged, loadOf map[*Judged]int) {
+	o.Verdict = None
+	at, hottest := -1, math.Inf(-1)
+	for i, l := range o.Loads {
+		if l.Status != Converged {
+			o.Verdict = NoResult
+		}
+		for _, v := range l.Verdicts {
+			o.Verdict = worse(o.Verdict, v.Verdict)
+		}
+		if len(l.Temps) > 0 && l.Status == Converged && l.Temps[0].K > hottest {
+			at, hottest = i, l.Temps[0].K
+		}
+	}
+	if decisive != nil {
+		at = loadOf[decisive]
+	}
+	if at < 0 {
+		at = 0
+	}
+	o.Loads[at].Governing = true
+	o.Governs = o.Loads[at].Name
+}
+
+// dewPointSource cites the formula behind limit.DewPoint.
+const dewPointSource = "dew point by the Magnus formula of Alduchov & Eskridge 1996, J. Appl. Meteor. 35:601-609 (coefficients from memory)"

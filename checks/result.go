@@ -1,0 +1,88 @@
+package checks
+
+import (
+	"math"
+
+	"stillair/checks/balance"
+)
+
+// temps lists every reported temperature at a solution: the core, the upper
+// zone of a box, every face, what lies under it.
+func (m *model) temps(s balance.Solution) []Temp {
+	var rows []Temp
+	add := func(at, kind string, k float64) { rows = append(rows, Temp{At: at, Kind: kind, K: k}) }
+	if m.coreName != "surface" {
+		add(m.coreName, m.coreKind, s.T[m.core])
+	}
+	if m.c.Body.Kind == "box" {
+		rise := s.Excess[m.core]
+		add("upper zone", "zone", m.c.Surroundings.Air.SI+m.c.Inside.UpperZone.SI*rise)
+	}
+	for _, f := range m.faces {
+		add(f.part.Face.Name, "outer surface", s.T[f.outer])
+	}
+	for _, f := range m.faces {
+		if f.inFilm >= 0 && len(f.solids) > 0 {
+			add(m.b.Name(f.inner), "inner surface", s.T[f.inner])
+		}
+		for _, n := range f.between {
+			add(m.b.Name(n), "interface", s.T[n])
+		}
+	}
+	return rows
+}
+
+// heatPaths lists the sources and what flows through every link, with the
+// share of those that reach the air or the surroundings.
+func (m *model) heatPaths(s balance.Solution) []HeatPath {
+	var rows []HeatPath
+	if m.c.Heat.Set {
+		rows = append(rows, HeatPath{From: "heat input", To: m.coreName, By: "source", W: m.c.Heat.SI})
+	}
+	for _, f := range m.faces {
+		if f.sun != 0 {
+			rows = append(rows, HeatPath{From: "sun", To: f.part.Face.Name, By: "sun", W: f.sun})
+		}
+	}
+	shed := 0.0
+	owner := m.owners()
+	for i, l := range m.b.Links {
+		from, final := m.b.Name(l.From), false
+		if name, ok := owner[i]; ok {
+			from, final = name, true
+			shed += math.Max(s.Heat[i], 0)
+		}
+		rows = append(rows, HeatPath{From: from, To: m.b.Name(l.To), By: l.By, W: s.Heat[i], Final: final})
+	}
+	for i := range rows {
+		if rows[i].Final && shed > 0 {
+			rows[i].Share = rows[i].W / shed
+		}
+	}
+	return rows
+}
+
+// owners maps the links that end in the air or in what the faces see to the
+// face they leave. A body without layers has one node for all its faces; so
+// each face still speaks for itself.
+func (m *model) owners() map[int]string {
+	own := map[int]string{}
+	for _, f := range m.faces {
+		own[f.convect] = f.part.Face.Name
+		own[f.convect+1] = f.part.Face.Name
+	}
+	return own
+}
+
+// heatShed is the heat in W that leaves the core: what goes to the air and the
+// surroundings less what the sun brings.
+func (m *model) heatShed(s balance.Solution) float64 {
+	w := 0.0
+	for i := range m.owners() {
+		w += s.Heat[i]
+	}
+	for _, f := range m.faces {
+		w -= f.sun
+	}
+	return w
+}
