@@ -15,8 +15,7 @@ func (m *model) temps(s balance.Solution) []Temp {
 		add(m.coreName, m.coreKind, s.T[m.core])
 	}
 	if m.c.Body.Kind == "box" {
-		rise := s.Excess[m.core]
-		add("upper zone", "zone", m.c.Surroundings.Air.SI+m.c.Inside.UpperZone.SI*rise)
+		add("upper zone", "zone", m.c.Surroundings.Air.SI+m.upperRise(s.Excess[m.core]))
 	}
 	for _, f := range m.faces {
 		add(f.part.Face.Name, "outer surface", s.T[f.outer])
@@ -85,4 +84,14 @@ func (m *model) heatShed(s balance.Solution) float64 {
 		w -= f.sun
 	}
 	return w
+}
+
+// upperRise is the rise of the upper zone of a box over the air outside: the
+// mean rise times the assumed factor. Inside air that is cooler than the air
+// outside sinks; its upper zone is taken at the mean.
+func (m *model) upperRise(mean float64) float64 {
+	if mean <= 0 {
+		return mean
+	}
+	return m.c.Inside.UpperZone.SI * mean
 }

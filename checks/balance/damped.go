@@ -9,9 +9,9 @@ import "math"
 const omega = 0.4
 
 // SolveDamped finds the temperatures by plain damped substitution: secant
-// conductances at the present temperatures, one linear solve, part of the change.
-// It shares nothing with Solve but the laws, starts elsewhere, and serves as
-// the independent check.
+// conductances at the present temperatures, one linear solve, part of the
+// change. It knows no slopes, no bracket and no line search, starts elsewhere,
+// and serves as the independent check of Solve.
 func (b *Balance) SolveDamped() Solution {
 	unknown := b.unknowns()
 	s := b.newState()
@@ -37,7 +37,7 @@ func (b *Balance) SolveDamped() Solution {
 }
 
 // settled ends damped substitution: change of a step over the largest excess.
-const settled = 1e-12
+const settled = 1e-11
 
 func (b *Balance) largest(s *state, unknown []Node) float64 {
 	most := 0.0
@@ -50,19 +50,17 @@ func (b *Balance) largest(s *state, unknown []Node) float64 {
 // damped iterates in place until the temperatures settle.
 func (b *Balance) damped(s *state, unknown []Node, most int) []Step {
 	var steps []Step
-	g := make([]float64, len(b.Links))
 	for n := 1; n <= most; n++ {
-		b.secants(s, g)
-		x, ok := b.linear(g, unknown)
+		dx, ok := b.step(s, b.secants(s), unknown)
 		if !ok {
 			return steps
 		}
 		_, rest := b.worst(s)
 		change := 0.0
 		for i, u := range unknown {
-			step := b.notTooFar(s.excess[u], omega*(x[i]-s.excess[u]))
-			change = math.Max(change, math.Abs(step))
-			s.excess[u] += step
+			part := b.notTooFar(s.excess[u], omega*dx[i])
+			change = math.Max(change, math.Abs(part))
+			s.move(u, part)
 		}
 		b.evaluate(s)
 		steps = append(steps, Step{N: n, Closure: rest, Change: change})
@@ -75,13 +73,15 @@ func (b *Balance) damped(s *state, unknown []Node, most int) []Step {
 
 // secants are the conductances heat over temperature difference; without a
 // difference the slope over a tiny one stands in.
-func (b *Balance) secants(s *state, g []float64) {
+func (b *Balance) secants(s *state) [][2]float64 {
+	g := make([][2]float64, len(b.Links))
 	for i, l := range b.Links {
-		dt := s.excess[l.From] - s.excess[l.To]
+		dt := (s.excess[l.From] - s.excess[l.To]) + (s.low[l.From] - s.low[l.To])
+		c := s.heat[i] / dt
 		if tiny := 1e-12 * b.ref; math.Abs(dt) < tiny {
-			g[i] = math.Abs(b.through(l, s, tiny, 0)) / tiny
-			continue
+			c = math.Abs(b.through(l, s, tiny, 0)) / tiny
 		}
-		g[i] = s.heat[i] / dt
+		g[i] = [2]float64{c, -c}
 	}
+	return g
 }

@@ -167,48 +167,18 @@ func (b *Balance) noWayOut() string {
 // start makes a first guess: every law as steep as over the first ten kelvin.
 func (b *Balance) start(s *state, unknown []Node) {
 	const probe = 10.0
-	g := make([]float64, len(b.Links))
+	g := make([][2]float64, len(b.Links))
 	for i, l := range b.Links {
-		g[i] = math.Abs(b.through(l, s, probe, 0)) / probe
+		c := math.Abs(b.through(l, s, probe, 0)) / probe
+		g[i] = [2]float64{c, -c}
 	}
-	if x, ok := b.linear(g, unknown); ok {
+	b.evaluate(s)
+	if dx, ok := b.step(s, g, unknown); ok {
 		for i, n := range unknown {
-			s.excess[n] = b.warmEnough(x[i])
+			s.move(n, b.notTooFar(s.excess[n], dx[i]))
 		}
 	}
 	b.evaluate(s)
-}
-
-// warmEnough keeps a trial above absolute zero.
-func (b *Balance) warmEnough(excess float64) float64 {
-	return math.Max(excess, -b.ref*(1-coldest))
-}
-
-// linear solves the balance with constant conductances g (W/K) for the excess
-// temperatures of the unknown nodes.
-func (b *Balance) linear(g []float64, unknown []Node) ([]float64, bool) {
-	at := b.positions(unknown)
-	n := len(unknown)
-	a := mat.NewDense(n, n, nil)
-	r := mat.NewVecDense(n, nil)
-	for i, u := range unknown {
-		r.SetVec(i, b.nodes[u].source)
-	}
-	for k, l := range b.Links {
-		for _, e := range [2][2]Node{{l.From, l.To}, {l.To, l.From}} {
-			i, j := at[e[0]], at[e[1]]
-			if i < 0 {
-				continue
-			}
-			a.Set(i, i, a.At(i, i)+g[k])
-			if j >= 0 {
-				a.Set(i, j, a.At(i, j)-g[k])
-			} else {
-				r.SetVec(i, r.AtVec(i)+g[k]*b.nodes[e[1]].excess)
-			}
-		}
-	}
-	return solveDense(a, r)
 }
 
 // positions maps every node to its row, or -1 when it is fixed.
@@ -255,8 +225,9 @@ func (b *Balance) slopes(s *state) [][2]float64 {
 	return out
 }
 
-// newton is the step J⁻¹ r of the unknown nodes.
-func (b *Balance) newton(s *state, slopes [][2]float64, unknown []Node) ([]float64, bool) {
+// step is the change of the unknown temperatures that would bring the heat left
+// over to zero if every law had the given slopes with both its ends.
+func (b *Balance) step(s *state, slopes [][2]float64, unknown []Node) ([]float64, bool) {
 	at := b.positions(unknown)
 	n := len(unknown)
 	j := mat.NewDense(n, n, nil)
@@ -290,7 +261,7 @@ func (b *Balance) accelerated(s *state, unknown []Node) ([]Step, bool) {
 			return append(steps, Step{N: n, Closure: rest}), true
 		}
 		slopes := b.slopes(s)
-		dx, ok := b.newton(s, slopes, unknown)
+		dx, ok := b.step(s, slopes, unknown)
 		if len(unknown) == 1 {
 			br.tighten(s.excess[unknown[0]], s.rest[unknown[0]])
 			dx, ok = []float64{br.inside(s.excess[unknown[0]], dx, ok)}, true

@@ -16,6 +16,8 @@ type ParseError struct {
 	Hint     string // one more sentence, or ""
 	// Offset and Width, in characters, mark the part of the text that is wrong.
 	Offset, Width int
+	// InUnit is true when the number could be read and its unit is at fault.
+	InUnit bool
 }
 
 // Error is the whole message as one line.
@@ -52,6 +54,7 @@ func Parse(text string, k Kind) (si float64, err error) {
 	}
 	si, perr = p.quantity(value)
 	if perr != nil {
+		perr.InUnit = true
 		return 0, perr
 	}
 	return si, nil

@@ -1,0 +1,308 @@
+package casefile
+
+import (
+	"errors"
+	"fmt"
+	"slices"
+	"strings"
+	"unicode/utf8"
+
+	"stillair/checks/unit"
+)
+
+const maxText = 4000 // characters of one text
+
+// check walks a value along its description and reports every slip of form:
+// keys, shapes, units, ranges, words. What depends on other values comes later.
+func (r *reader) check(v *value, in *input, path string) {
+	switch {
+	case v.bad:
+		return
+	case v.shape == nothing && in.form == text && !in.required:
+		return
+	case v.shape == nothing:
+		r.empty(v, in, path)
+		return
+	case v.shape != shapeOf(in.form):
+		r.wrongShape(v, in, path)
+		return
+	}
+	switch in.form {
+	case section, byName:
+		r.checkKeys(v, in, path)
+	case list:
+		r.checkItems(v, in, path)
+	case quantity:
+		r.checkQuantity(v, in, path)
+	case word:
+		r.checkWord(v, in, path)
+	case text:
+		r.checkText(v, in, path)
+	}
+}
+
+func shapeOf(f form) shape {
+	switch f {
+	case section, byName:
+		return mapping
+	case list:
+		return sequence
+	}
+	return scalar
+}
+
+func join(path, key string) string {
+	if path == "" {
+		return key
+	}
+	return path + "." + key
+}
+
+func (r *reader) bad(v *value, code, path string, f Finding) {
+	v.bad = true
+	r.add(code, v.at, path, f)
+}
+
+func (r *reader) empty(v *value, in *input, path string) {
+	r.bad(v, "E-205", path, Finding{Message: path + " has no value", Found: "nothing", Expected: in.expected(),
+		Help: "give it a value or remove the key"})
+}
+
+// expected says in words what may stand behind a key.
+func (in *input) expected() string {
+	switch in.form {
+	case quantity:
+		return in.kind.Name() + ", such as " + in.example
+	case word:
+		return "one of " + oneOf(in.words.words())
+	case section, byName:
+		return "a section with " + oneOf(in.keys())
+	case list:
+		return "a list, each entry after a -"
+	}
+	if in.example != "" {
+		return "text, such as " + in.example
+	}
+	return "text"
+}
+
+func (r *reader) wrongShape(v *value, in *input, path string) {
+	found := v.shape.String()
+	if v.shape == scalar {
+		found = quote(v.text)
+	}
+	where := path
+	if where == "" {
+		where = "the file"
+	}
+	r.bad(v, "E-206", path, Finding{Message: where + " has the wrong form", Found: found, Expected: in.expected()})
+}
+
+func (r *reader) checkKeys(v *value, in *input, path string) {
+	if len(v.pairs) == 0 {
+		r.empty(v, in, path)
+		return
+	}
+	for _, p := range v.pairs {
+		part := in.child(p.key)
+		if part == nil || in.form == byName && !slices.Contains(r.faces, p.key) {
+			r.unknownKey(v, in, p, path)
+			continue
+		}
+		r.check(p.value, part, join(path, p.key))
+	}
+}
+
+// unknownKey reports a key that has no place here.
+func (r *reader) unknownKey(v *value, in *input, p pair, path string) {
+	keys := in.keys()
+	code, noun := "E-201", "key"
+	switch {
+	case in.form == byName:
+		code, noun = "E-305", "face"
+		keys = common(keys, r.faces)
+	case in == methods:
+		code, noun = "E-310", "situation"
+	}
+	f := Finding{Found: quote(p.key), Expected: "one of " + oneOf(keys), Nearest: nearest(p.key, keys),
+		Message: fmt.Sprintf("the %s %s is not known in %s", noun, quote(p.key), whereWord(path))}
+	if owners := owners(p.key); code == "E-201" && len(owners) > 0 {
+		code = "E-202"
+		f.Message = fmt.Sprintf("the key %s does not belong in %s", quote(p.key), whereWord(path))
+		f.Help = "it belongs in " + oneOf(owners)
+	}
+	if strings.HasPrefix(path, "loads[") && p.key == "surroundings" {
+		f.Help = "a load case names air, radiant, sees, sun, altitude, pressure and humidity directly"
+	}
+	if v.flow && p.value.shape == nothing && !p.value.bad {
+		f.Help = "a text that holds a comma needs quotes between { and }"
+	}
+	p.value.bad = true
+	if v.meant == nil {
+		v.meant = map[string]bool{}
+	}
+	v.meant[f.Nearest] = true
+	r.add(code, p.at, join(path, p.key), f)
+}
+
+func whereWord(path string) string {
+	if path == "" {
+		return "the case"
+	}
+	return path
+}
+
+func common(a, b []string) (both []string) {
+	for _, x := range a {
+		if slices.Contains(b, x) {
+			both = append(both, x)
+		}
+	}
+	return both
+}
+
+// owners lists the sections that a key belongs in.
+func owners(key string) (paths []string) {
+	for _, d := range Inputs() {
+		at := strings.LastIndex(d.Path, ".")
+		if strings.HasPrefix(d.Path, "loads[].") || d.Path[at+1:] != key {
+			continue
+		}
+		owner := "the top level of the case"
+		if at > 0 {
+			owner = d.Path[:at]
+		}
+		paths = append(paths, owner)
+	}
+	return paths
+}
+
+func (r *reader) checkItems(v *value, in *input, path string) {
+	if len(v.items) == 0 {
+		if in.key != layers.key { // a body without layers may say so
+			r.empty(v, in, path)
+		}
+		return
+	}
+	for i, item := range v.items {
+		if path == "loads" {
+			break // each load is checked with its own body
+		}
+		r.check(item, in.each, itemPath(path, i))
+	}
+}
+
+func itemPath(path string, i int) string { return fmt.Sprintf("%s[%d]", path, i+1) }
+
+func (r *reader) checkQuantity(v *value, in *input, path string) {
+	si, err := unit.Parse(v.text, in.kind)
+	var pe *unit.ParseError
+	if errors.As(err, &pe) {
+		code := "E-301"
+		if pe.InUnit {
+			code = "E-302"
+		}
+		v.bad = true
+		r.add(code, v.within(pe.Offset, pe.Width), path, Finding{
+			Message: fmt.Sprintf("%s is not %s: %s", path, in.kind.Name(), v.text), Found: pe.Found, Expected: pe.Expected, Help: pe.Hint})
+		return
+	}
+	if !in.span.holds(si) {
+		r.bad(v, "E-303", path, Finding{Message: path + " is out of range", Found: v.text, Expected: in.span.text})
+	}
+}
+
+// within is the place of a part of a scalar; the whole of it when the text in
+// the file was folded or escaped.
+func (v *value) within(offset, width int) place {
+	quotes := 0
+	if v.quoted {
+		quotes = 2
+	}
+	length := utf8.RuneCountInString(v.text)
+	if v.at.width != length+quotes || offset > length {
+		return v.at
+	}
+	return place{v.at.line, v.at.column + quotes/2 + offset, max(1, min(width, length-offset))}
+}
+
+func (r *reader) checkWord(v *value, in *input, path string) {
+	if in.key == "at" || in.words.knows(v.text) {
+		return // a place depends on the body; see limits
+	}
+	words := in.words.words()
+	r.bad(v, in.words.code, path, Finding{Message: fmt.Sprintf("the %s %s is not known", in.words.noun, quote(v.text)),
+		Found: quote(v.text), Expected: "one of " + oneOf(words), Nearest: nearest(v.text, words), Help: several(v.text, words)})
+}
+
+// several tells that typed words fit more than one entry of a catalogue.
+func several(typed string, words []string) string {
+	var fit []string
+	parts := strings.Fields(strings.ToLower(typed))
+	for _, w := range words {
+		if len(parts) > 0 && holdsAll(strings.ToLower(w), parts) {
+			fit = append(fit, w)
+		}
+	}
+	if len(fit) < 2 {
+		return ""
+	}
+	return "it could mean: " + strings.Join(fit[:min(len(fit), 6)], "; ")
+}
+
+func (r *reader) checkText(v *value, in *input, path string) {
+	if i := strings.IndexFunc(v.text, unprintable); i >= 0 {
+		r.bad(v, "E-312", path, Finding{Message: path + " holds a control character", Found: fmt.Sprintf("U+%04X", []rune(v.text[i:])[0]), Expected: "plain text"})
+		return
+	}
+	if n := utf8.RuneCountInString(v.text); n > maxText {
+		r.bad(v, "E-312", path, Finding{Message: path + " is too long", Found: fmt.Sprintf("%d characters", n), Expected: fmt.Sprintf("at most %d", maxText)})
+		return
+	}
+	if in.required && strings.TrimSpace(v.text) == "" {
+		r.empty(v, in, path)
+	}
+}
+
+// checkBodyKinds wants exactly one kind of body.
+func (r *reader) checkBodyKinds(root *value) {
+	b := root.pair("body")
+	if b == nil || b.value.shape != mapping {
+		return
+	}
+	var kinds []pair
+	for _, p := range b.value.pairs {
+		if slices.Contains(bodyKinds, p.key) {
+			kinds = append(kinds, p)
+		}
+	}
+	for _, p := range kinds[min(1, len(kinds)):] {
+		r.add("E-207", p.at, "body."+p.key, Finding{Message: "a case has one body", Found: quote(p.key) + " beside " + quote(kinds[0].key), Expected: "exactly one of " + oneOf(bodyKinds)})
+	}
+}
+
+// required reports the keys that a section lacks.
+func (b *builder) required(v *value, in *input, at place, path string) {
+	for _, p := range in.parts {
+		got := v.pair(p.key)
+		switch {
+		case got == nil && p.required && !v.meant[p.key]:
+			b.add("E-204", at, join(path, p.key), Finding{Message: join(path, p.key) + " is missing", Found: "no " + p.key, Expected: p.line()})
+		case got != nil && p.form == section && got.value.shape == mapping && p != body:
+			b.required(got.value, p, got.at, join(path, p.key))
+		}
+	}
+}
+
+// line is the input as a line of a case file.
+func (in *input) line() string {
+	if in.form != section {
+		return in.key + ": " + in.example
+	}
+	for _, p := range in.parts {
+		if p.required {
+			return in.key + ": {" + p.key + ": " + p.example + ", ...}"
+		}
+	}
+	return in.key + ": {" + in.parts[0].key + ": ...}"
+}
