@@ -309,7 +309,7 @@ func (b *builder) catalogueMaterial(v *value, path string) string {
 	if !ok {
 		names := materials.words()
 		b.add("E-307", v.at, path, Finding{Message: fmt.Sprintf("the material %s is not in the material table", quote(v.text)), Found: quote(v.text),
-			Expected: "one of " + oneOf(names) + ", or a conductivity beside it", Nearest: nearest(v.text, names), Help: several(v.text, names)})
+			Expected: materials.expected(wall.part("material").example) + ", or a conductivity beside it", Nearest: nearest(v.text, names), Help: several(v.text, names)})
 		return v.text
 	}
 	if m.Confidence == "low" {

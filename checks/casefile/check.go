@@ -74,7 +74,7 @@ func (in *input) expected() string {
 	case quantity:
 		return in.kind.Name() + ", such as " + in.example
 	case word:
-		return "one of " + oneOf(in.words.words())
+		return in.words.expected(in.example)
 	case section, byName:
 		return "a section with " + oneOf(in.keys())
 	case list:
@@ -84,6 +84,15 @@ func (in *input) expected() string {
 		return "text, such as " + in.example
 	}
 	return "text"
+}
+
+// expected lists a few words, or points to a catalogue.
+func (v *vocabulary) expected(example string) string {
+	words := v.words()
+	if v.known == nil || len(words) <= 8 {
+		return "one of " + oneOf(words)
+	}
+	return fmt.Sprintf("a name or id of the %s table, such as %s", v.noun, example)
 }
 
 func (r *reader) wrongShape(v *value, in *input, path string) {
@@ -232,7 +241,7 @@ func (r *reader) checkWord(v *value, in *input, path string) {
 	}
 	words := in.words.words()
 	r.bad(v, in.words.code, path, Finding{Message: fmt.Sprintf("the %s %s is not known", in.words.noun, quote(v.text)),
-		Found: quote(v.text), Expected: "one of " + oneOf(words), Nearest: nearest(v.text, words), Help: several(v.text, words)})
+		Found: quote(v.text), Expected: in.words.expected(in.example), Nearest: nearest(v.text, words), Help: several(v.text, words)})
 }
 
 // several tells that typed words fit more than one entry of a catalogue.

@@ -28,7 +28,9 @@ func nearest(typed string, words []string) string {
 	}
 	best, bestAt := "", max(1, len([]rune(low))/3)+1
 	for _, w := range words {
-		if d := distance(low, strings.ToLower(w), bestAt); d < bestAt {
+		whole := strings.ToLower(w)
+		d := min(distance(low, whole, bestAt), distance(low, leading(whole, len(strings.Fields(low))), bestAt))
+		if d < bestAt {
 			best, bestAt = w, d
 		}
 	}
@@ -36,6 +38,12 @@ func nearest(typed string, words []string) string {
 		best = containing(low, words)
 	}
 	return best
+}
+
+// leading is the first n words of a name, as catalogues let people type them.
+func leading(name string, n int) string {
+	words := strings.Fields(name)
+	return strings.TrimRight(strings.Join(words[:min(n, len(words))], " "), ",")
 }
 
 // containing is the shortest word of a list that holds all parts of the typed one.
@@ -85,10 +93,14 @@ func distance(a, b string, limit int) int {
 // oneOf lists words for the "expected" of a finding, at most eight.
 func oneOf(words []string) string {
 	const most = 8
-	if len(words) <= most {
-		return strings.Join(words, ", ")
+	between := ", "
+	if slices.ContainsFunc(words, func(w string) bool { return strings.Contains(w, ",") }) {
+		between = "; "
 	}
-	return strings.Join(words[:most], ", ") + fmt.Sprintf(" or one of %d more", len(words)-most)
+	if len(words) <= most {
+		return strings.Join(words, between)
+	}
+	return strings.Join(words[:most], between) + fmt.Sprintf(" or one of %d more", len(words)-most)
 }
 
 // facesOf lists the faces of a body, as the geometry names them.
