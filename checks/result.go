@@ -77,11 +77,8 @@ func (m *model) owners() map[int]string {
 // surroundings less what the sun brings.
 func (m *model) heatShed(s balance.Solution) float64 {
 	w := 0.0
-	for i := range m.owners() {
-		w += s.Heat[i]
-	}
 	for _, f := range m.faces {
-		w -= f.sun
+		w += s.Heat[f.convect] + s.Heat[f.convect+1] - f.sun
 	}
 	return w
 }

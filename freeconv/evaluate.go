@@ -93,7 +93,7 @@ func solve(f *geometry.Face, s *State, choice Choice) outcome {
 	return out
 }
 
-// tidy puts air where no gas is named and zero where the difference is no number.
+// tidy puts air where no gas is named and zero where a temperature is no number.
 func tidy(s *State) State {
 	st := *s
 	if st.Gas == nil {
@@ -101,6 +101,9 @@ func tidy(s *State) State {
 	}
 	if math.IsNaN(st.DT) || math.IsInf(st.DT, 0) {
 		st.DT = 0
+	}
+	if math.IsNaN(st.Ta) {
+		st.Ta = 0
 	}
 	return st
 }

@@ -157,6 +157,9 @@ func notes(o *outcome, f *geometry.Face) []string {
 	if r.kind == VerticalCylinder {
 		list = append(list, slenderNote(r, f))
 	}
+	if r.c == &largestUp && lowBranchUp(r.in.Ra) {
+		list = append(list, "the branch 0.96 Ra^(1/6) governs, which is from memory, not seen in print")
+	}
 	if r.c.Flux {
 		list = append(list, "form for uniform heat flux: the temperature difference is that of the mean wall temperature")
 	}

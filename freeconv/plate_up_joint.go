@@ -20,3 +20,6 @@ var largestUp = Correlation{
 		return math.Max(0.96*root6(in.Ra), quarterOrThird(in.Ra, 0.54, 0.15))
 	},
 }
+
+// lowBranchUp reports whether the branch of Goldstein et al. is the largest.
+func lowBranchUp(Ra float64) bool { return 0.96*root6(Ra) > quarterOrThird(Ra, 0.54, 0.15) }

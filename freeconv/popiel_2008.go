@@ -16,9 +16,9 @@ var popielCylinder = Correlation{
 	Kinds: []Kind{VerticalCylinder},
 	Citation: "C. O. Popiel, Heat Transfer Eng. 29 (2008) 521-536; C. O. Popiel, J. Wojtkowiak, K. Bober, Exp. Therm. Fluid Sci. 32 (2007) 607-613; " +
 		"T. Cebeci, Proc. 5th Int. Heat Transfer Conf., Tokyo 1974, vol. 3, 15-19",
-	Equation: `\mathrm{Nu} = \mathrm{Nu}_{\mathrm{plate}} \cdot \left[ 1 + B \cdot \left( \sqrt{32} \cdot \left( \frac{\mathrm{Ra}}{\mathrm{Pr}} \right)^{-1/4} \cdot \frac{L}{D} \right)^{C} \right]` + "\\n" +
-		`B = 0.0571322 + 0.20305\,\mathrm{Pr}^{-0.43}` + "\\n" +
-		`C = 0.9165 - 0.0043\,\mathrm{Pr}^{1/2} + 0.01333 \cdot \ln\left( \mathrm{Pr} \right) + \frac{0.0004809}{\mathrm{Pr}}` + "\\n" +
+	Equation: `\mathrm{Nu} = \mathrm{Nu}_{\mathrm{plate}} \cdot \left[ 1 + B \cdot \left( \sqrt{32} \cdot \left( \frac{\mathrm{Ra}}{\mathrm{Pr}} \right)^{-1/4} \cdot \frac{L}{D} \right)^{C} \right]` + "\n" +
+		`B = 0.0571322 + 0.20305\,\mathrm{Pr}^{-0.43}` + "\n" +
+		`C = 0.9165 - 0.0043\,\mathrm{Pr}^{1/2} + 0.01333 \cdot \ln\left( \mathrm{Pr} \right) + \frac{0.0004809}{\mathrm{Pr}}` + "\n" +
 		`\mathrm{Nu}_{\mathrm{plate}} = \frac{4}{3} \cdot \left( \frac{\mathrm{Ra}}{4\,\mathrm{Pr}} \right)^{1/4} \cdot ` +
 		`\frac{0.75\,\mathrm{Pr}^{1/2}}{\left( 0.609 + 1.221\,\mathrm{Pr}^{1/2} + 1.238\,\mathrm{Pr} \right)^{1/4}}`,
 	Length: Height, FilmWeight: 0.5, BetaWeight: 0.5,

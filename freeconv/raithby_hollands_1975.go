@@ -18,9 +18,9 @@ const raithbyHollandsScatter = "a few percent, from memory; no figure seen in pr
 var raithbyHollandsVertical = Correlation{
 	ID: "raithby-hollands-1975-plate", Name: "Raithby & Hollands 1975, vertical plate",
 	Kinds: []Kind{VerticalPlate}, Citation: raithbyHollandsCitation,
-	Equation: `\mathrm{Nu} = \left( \mathrm{Nu}_{l}^{6} + \mathrm{Nu}_{t}^{6} \right)^{1/6}` + "\\n" +
-		`\mathrm{Nu}_{l} = \frac{2.0}{\ln\left( 1 + \frac{2.0}{\mathrm{Nu}_{T}} \right)}` + "\\n" +
-		`\mathrm{Nu}_{T} = \frac{0.671\,\mathrm{Ra}^{1/4}}{\left[ 1 + \left( \frac{0.492}{\mathrm{Pr}} \right)^{9/16} \right]^{4/9}}` + "\\n" +
+	Equation: `\mathrm{Nu} = \left( \mathrm{Nu}_{l}^{6} + \mathrm{Nu}_{t}^{6} \right)^{1/6}` + "\n" +
+		`\mathrm{Nu}_{l} = \frac{2.0}{\ln\left( 1 + \frac{2.0}{\mathrm{Nu}_{T}} \right)}` + "\n" +
+		`\mathrm{Nu}_{T} = \frac{0.671\,\mathrm{Ra}^{1/4}}{\left[ 1 + \left( \frac{0.492}{\mathrm{Pr}} \right)^{9/16} \right]^{4/9}}` + "\n" +
 		`\mathrm{Nu}_{t} = \frac{0.13\,\mathrm{Pr}^{0.22}}{\left( 1 + 0.61\,\mathrm{Pr}^{0.81} \right)^{0.42}} \cdot \frac{\mathrm{Ra}^{1/3}}{1 + 1.4 \cdot 10^{9} \cdot \frac{\mathrm{Pr}}{\mathrm{Ra}}}`,
 	Length: Height, FilmWeight: 0.5, BetaWeight: 0.5,
 	RaMin: 0.1, RaMax: 1e12, ScatterNote: raithbyHollandsScatter, Verification: FromMemory,
@@ -31,9 +31,9 @@ var raithbyHollandsVertical = Correlation{
 var raithbyHollandsUp = Correlation{
 	ID: "raithby-hollands-1975-up", Name: "Raithby & Hollands 1975, horizontal plate, unstable side",
 	Kinds: []Kind{PlateUp}, Citation: raithbyHollandsCitation,
-	Equation: `\mathrm{Nu} = \left( \mathrm{Nu}_{l}^{10} + \mathrm{Nu}_{t}^{10} \right)^{1/10}` + "\\n" +
-		`\mathrm{Nu}_{l} = \frac{1.4}{\ln\left( 1 + \frac{1.4}{\mathrm{Nu}_{T}} \right)}` + "\\n" +
-		`\mathrm{Nu}_{T} = 0.835 \cdot \frac{0.671\,\mathrm{Ra}^{1/4}}{\left[ 1 + \left( \frac{0.492}{\mathrm{Pr}} \right)^{9/16} \right]^{4/9}}` + "\\n" +
+	Equation: `\mathrm{Nu} = \left( \mathrm{Nu}_{l}^{10} + \mathrm{Nu}_{t}^{10} \right)^{1/10}` + "\n" +
+		`\mathrm{Nu}_{l} = \frac{1.4}{\ln\left( 1 + \frac{1.4}{\mathrm{Nu}_{T}} \right)}` + "\n" +
+		`\mathrm{Nu}_{T} = 0.835 \cdot \frac{0.671\,\mathrm{Ra}^{1/4}}{\left[ 1 + \left( \frac{0.492}{\mathrm{Pr}} \right)^{9/16} \right]^{4/9}}` + "\n" +
 		`\mathrm{Nu}_{t} = 0.14 \cdot \frac{1 + 0.0107\,\mathrm{Pr}}{1 + 0.01\,\mathrm{Pr}} \cdot \mathrm{Ra}^{1/3}`,
 	Length: AreaOverPerimeter, FilmWeight: 0.5, BetaWeight: 0.5,
 	RaMin: 1, RaMax: 0, ScatterNote: raithbyHollandsScatter, Verification: InPrint,
@@ -44,7 +44,7 @@ var raithbyHollandsUp = Correlation{
 var raithbyHollandsDown = Correlation{
 	ID: "raithby-hollands-1975-down", Name: "Raithby & Hollands 1975, horizontal plate, stable side",
 	Kinds: []Kind{PlateDown}, Citation: raithbyHollandsCitation,
-	Equation: `\mathrm{Nu} = \frac{2.5}{\ln\left( 1 + \frac{2.5}{\mathrm{Nu}_{T}} \right)}` + "\\n" +
+	Equation: `\mathrm{Nu} = \frac{2.5}{\ln\left( 1 + \frac{2.5}{\mathrm{Nu}_{T}} \right)}` + "\n" +
 		`\mathrm{Nu}_{T} = \frac{0.527\,\mathrm{Ra}^{1/5}}{\left[ 1 + \left( \frac{1.9}{\mathrm{Pr}} \right)^{0.9} \right]^{2/9}}`,
 	Length: AreaOverPerimeter, FilmWeight: 0.5, BetaWeight: 0.5,
 	RaMin: 1e3, RaMax: 1e10, ScatterNote: raithbyHollandsScatter, Verification: InPrint,

@@ -53,7 +53,7 @@ func init() {
 		InclinedDown: {&inclinedRuleDown,
 			"holds at any tilt and meets the vertical and the horizontal plate at its ends", &raithbyHollandsInclinedDown},
 		HorizontalCylinder: {&churchillChuCylinder,
-			"one smooth equation from conduction to turbulence, so that no result jumps at the transition", &mcAdamsCylinder},
+			"one smooth equation from conduction to turbulence, so that no result jumps at the transition", &morganCylinder},
 		VerticalCylinder: {&verticalCylinderRule,
 			"a thick cylinder is a plate bent round; a slender one loses more, and the larger of both laws has no jump between them", &lefevreEde},
 		Sphere: {&churchillSphere,

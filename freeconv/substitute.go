@@ -18,8 +18,6 @@ func substituter(equation string) func(Input) string {
 			{`\mathrm{Ra}`, in.Ra},
 			{`\mathrm{Pr}`, in.Pr},
 			{`\frac{L}{D}`, in.LD},
-			{`\frac{D}{L}`, 1 / in.LD},
-			{`\frac{A}{PL}`, in.AP},
 			{`\theta`, in.Theta},
 		}
 		var pairs []string

@@ -30,6 +30,6 @@ var vlietLiu = Correlation{
 	Length:   Height, FilmWeight: 0.5, BetaWeight: 0.5,
 	RaMin: 1.4e4, RaMax: 5.9e12, ScatterNote: "none published", Verification: InPrint, Flux: true,
 	Note: "Local laws turned into the mean wall temperature by integration. Taken as the larger of both branches, which meet at " +
-		"Ra* = 3.6e12, in the gap 1e11..2e13 that the source leaves. The range is that of the source, Ra* = 1e5..1e16, put into Ra. Measured in water.",
+		"Ra* = 3.4e12, in the gap 1e11..2e13 that the source leaves. The range is that of the source, Ra* = 1e5..1e16, put into Ra. Measured in water.",
 	Nu: func(in Input) float64 { return quarterOrThird(in.Ra, vlietLiuLaminar, vlietLiuTurbulent) },
 }

@@ -70,7 +70,7 @@ func (b *builder) head() {
 	if b.c.Units == "" {
 		b.c.Units = description.part("units").usual
 	}
-	if v := b.root.get("remarks"); v != nil {
+	if v := b.root.get("remarks"); v != nil && !v.bad {
 		for _, item := range v.items {
 			if item.shape == scalar && !item.bad {
 				b.c.Remarks = append(b.c.Remarks, strings.TrimSpace(item.text))
@@ -171,11 +171,25 @@ func (b *builder) surroundings() {
 func (b *builder) perFace(in *input, v *value, path string) map[string]Quantity {
 	all := map[string]Quantity{}
 	for _, p := range v.children() {
-		if q := b.quantity(in.each, p.value, join(path, p.key)); q.Set && slices.Contains(b.r.faces, p.key) {
+		if b.noFace(p, path) {
+			continue
+		}
+		if q := b.quantity(in.each, p.value, join(path, p.key)); q.Set {
 			all[p.key] = q
 		}
 	}
 	return all
+}
+
+// noFace reports a face that the case names and that a load case, by turning
+// the axis, takes away.
+func (b *builder) noFace(p pair, path string) bool {
+	if slices.Contains(b.r.faces, p.key) {
+		return false
+	}
+	b.add("E-305", p.at, join(path, p.key), Finding{Message: fmt.Sprintf("the body has no face %s in one of the load cases", quote(p.key)),
+		Found: quote(p.key), Expected: "one of " + oneOf(b.r.faces)})
+	return true
 }
 
 func (b *builder) body() {
@@ -241,8 +255,11 @@ func (b *builder) covers(in *input, v *value, path string) {
 		return
 	}
 	for _, p := range v.get("faces").children() {
+		if b.noFace(p, join(path, "faces")) {
+			continue
+		}
 		state := b.choice(faces.each, p.value, join(path, "faces."+p.key))
-		if state != "" && state != free && slices.Contains(b.r.faces, p.key) {
+		if state != "" && state != free {
 			b.c.Body.Covered[p.key] = state
 			b.coveredInSun(p.key)
 		}
@@ -271,7 +288,7 @@ func (b *builder) solids(v *value, path string) {
 		layer := b.layer(w, v.pair("wall").at, join(path, "wall"))
 		b.c.Body.Wall = &layer
 	}
-	if l := v.get("layers"); l != nil {
+	if l := v.get("layers"); l != nil && !l.bad {
 		for i, item := range l.items {
 			at := itemPath(join(path, "layers"), i)
 			if item.shape != mapping {

@@ -5,12 +5,17 @@ import (
 	"fmt"
 	"slices"
 	"strings"
+	"sync"
 	"unicode/utf8"
 
 	"stillair/checks/unit"
 )
 
-const maxText = 4000 // characters of one text
+// Bounds of texts and lists.
+const (
+	maxText  = 4000 // characters
+	maxItems = 200
+)
 
 // check walks a value along its description and reports every slip of form:
 // keys, shapes, units, ranges, words. What depends on other values comes later.
@@ -112,14 +117,15 @@ func (r *reader) checkKeys(v *value, in *input, path string) {
 		r.empty(v, in, path)
 		return
 	}
-	for _, p := range v.pairs {
+	v.pairs = slices.DeleteFunc(v.pairs, func(p pair) bool {
 		part := in.child(p.key)
 		if part == nil || in.form == byName && !slices.Contains(r.faces, p.key) {
 			r.unknownKey(v, in, p, path)
-			continue
+			return true
 		}
 		r.check(p.value, part, join(path, p.key))
-	}
+		return false
+	})
 }
 
 // unknownKey reports a key that has no place here.
@@ -134,10 +140,10 @@ func (r *reader) unknownKey(v *value, in *input, p pair, path string) {
 		code, noun = "E-310", "situation"
 	}
 	f := Finding{Found: quote(p.key), Expected: "one of " + oneOf(keys), Nearest: nearest(p.key, keys),
-		Message: fmt.Sprintf("the %s %s is not known in %s", noun, quote(p.key), whereWord(path))}
+		Message: fmt.Sprintf("the %s %s is not known %s", noun, quote(p.key), whereWord(path))}
 	if owners := owners(p.key); code == "E-201" && len(owners) > 0 {
 		code = "E-202"
-		f.Message = fmt.Sprintf("the key %s does not belong in %s", quote(p.key), whereWord(path))
+		f.Message = fmt.Sprintf("the key %s does not belong %s", quote(p.key), whereWord(path))
 		f.Help = "it belongs in " + oneOf(owners)
 	}
 	if strings.HasPrefix(path, "loads[") && p.key == "surroundings" {
@@ -146,7 +152,6 @@ func (r *reader) unknownKey(v *value, in *input, p pair, path string) {
 	if v.flow && p.value.shape == nothing && !p.value.bad {
 		f.Help = "a text that holds a comma needs quotes between { and }"
 	}
-	p.value.bad = true
 	if v.meant == nil {
 		v.meant = map[string]bool{}
 	}
@@ -156,9 +161,9 @@ func (r *reader) unknownKey(v *value, in *input, p pair, path string) {
 
 func whereWord(path string) string {
 	if path == "" {
-		return "the case"
+		return "at the top level"
 	}
-	return path
+	return "in " + path
 }
 
 func common(a, b []string) (both []string) {
@@ -171,26 +176,33 @@ func common(a, b []string) (both []string) {
 }
 
 // owners lists the sections that a key belongs in.
-func owners(key string) (paths []string) {
+func owners(key string) []string { return sections()[key] }
+
+// sections lists the sections of every key, those of load cases left out.
+var sections = sync.OnceValue(func() map[string][]string {
+	all := map[string][]string{}
 	for _, d := range Inputs() {
-		at := strings.LastIndex(d.Path, ".")
-		if strings.HasPrefix(d.Path, "loads[].") || d.Path[at+1:] != key {
+		if strings.HasPrefix(d.Path, "loads[].") {
 			continue
 		}
-		owner := "the top level of the case"
-		if at > 0 {
-			owner = d.Path[:at]
+		owner, key := "the top level", d.Path
+		if at := strings.LastIndex(d.Path, "."); at > 0 {
+			owner, key = d.Path[:at], d.Path[at+1:]
 		}
-		paths = append(paths, owner)
+		all[key] = append(all[key], owner)
 	}
-	return paths
-}
+	return all
+})
 
 func (r *reader) checkItems(v *value, in *input, path string) {
 	if len(v.items) == 0 {
 		if in.key != layers.key { // a body without layers may say so
 			r.empty(v, in, path)
 		}
+		return
+	}
+	if len(v.items) > maxItems {
+		r.bad(v, "E-313", path, Finding{Message: path + " is too long a list", Found: fmt.Sprintf("%d entries", len(v.items)), Expected: fmt.Sprintf("at most %d", maxItems)})
 		return
 	}
 	for i, item := range v.items {

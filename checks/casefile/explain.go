@@ -8,7 +8,7 @@ type ruling struct{ code, text string }
 // rulings explains every code. Codes are stable: a number is never used for
 // another meaning. E-5xx are warnings.
 var rulings = []ruling{
-	{"E-101", "The file is larger than 1 MiB. A case file describes one body and is a few kilobytes long. Line lists belong in a CSV file."},
+	{"E-101", "The file is larger than 1 MiB or has more than 5000 lines. A case file describes one body and is a few kilobytes long. Line lists belong in a CSV file."},
 	{"E-102", "The file is not text in UTF-8, or it holds control characters or characters that change the reading direction. Save it as UTF-8 text. The place is the first such character."},
 	{"E-103", "The file is not valid YAML at this place. Common causes: a tab instead of spaces, a missing space after a colon, a bracket that is not closed, or a text that holds a colon or a # and needs quotes. Nothing after such a place can be read, so it is reported alone."},
 	{"E-104", "The file holds more than one YAML document (a line ---) or a directive (a line beginning with %). Write one case in one file."},
@@ -37,6 +37,7 @@ var rulings = []ruling{
 	{"E-310", "There is no such situation of free convection. The keys of methods: are situations, such as vertical plate."},
 	{"E-311", "There is no correlation of this name for the situation. Each situation takes only correlations that were published for it."},
 	{"E-312", "The text holds a control character or is longer than 4000 characters."},
+	{"E-313", "A list has more than 200 entries. Split the case into several files."},
 	{"E-401", "heat and contents are both given. A body is driven by one of them. A load case may use the other one: it then replaces the one of the case."},
 	{"E-402", "altitude and pressure are both given. Both fix the air pressure; type one."},
 	{"E-403", "The wall is thicker than half of the smallest outside size, so nothing is left inside. The wall lies within the outside size of the bare body, layers lie outside."},

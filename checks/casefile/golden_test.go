@@ -47,6 +47,7 @@ func read(t *testing.T, file string) []byte {
 // made holds the files that are better made than stored.
 var made = map[string]string{
 	"E-101": "title: " + strings.Repeat("x", maxBytes) + "\n",
+	"E-313": "title: Many\nremarks:\n" + strings.Repeat("  - x\n", maxItems+1),
 	"E-199": "title: Many\n" + manyKeys(150),
 }
 

@@ -30,7 +30,7 @@ func places(kind string, faces []string) []string {
 
 func (b *builder) limits() {
 	v := b.root.get("limits")
-	if v == nil || v.shape != sequence {
+	if v == nil || v.bad || v.shape != sequence {
 		return
 	}
 	for i, item := range v.items {
@@ -147,7 +147,7 @@ func (r *reader) condensation(cases []Case, root *value) {
 		return
 	}
 	v := root.get("limits")
-	if v == nil || humidityTyped(root) {
+	if v == nil || v.bad || humidityTyped(root) {
 		return
 	}
 	for i, item := range v.items {

@@ -97,6 +97,7 @@ func (r *reader) load(base, item *value, i int) (Case, bool) {
 		r.check(item, loadEntry, path)
 		return Case{}, false
 	}
+	r.sameBody(base, item, path)
 	over := overlay(item)
 	merged := merge(base, over, "")
 	kind, axis := bodyOf(merged)
@@ -105,8 +106,6 @@ func (r *reader) load(base, item *value, i int) (Case, bool) {
 	}
 	r.faces = facesOf(kind, axis)
 	r.check(item, loadEntry, path)
-	r.sameBody(base, item, path)
-	r.checkBodyKinds(item)
 	b := newBuilder(r, merged)
 	b.required(item, loadEntry, item.at, path)
 	b.build()
@@ -123,15 +122,23 @@ func (v *value) textOf(key string) string {
 	return ""
 }
 
-// sameBody refuses a load case that changes the kind of body.
+// sameBody refuses a load case that changes the kind of body, and takes the
+// other body out of it.
 func (r *reader) sameBody(base, item *value, path string) {
 	was, _ := bodyOf(base)
-	for _, p := range item.get("body").children() {
-		if was != "" && p.key != was && slices.Contains(bodyKinds, p.key) {
-			r.add("E-412", p.at, join(path, "body."+p.key), Finding{Message: "a load case cannot change the kind of body",
-				Found: quote(p.key), Expected: "changes to " + was, Nearest: was})
-		}
+	b := item.get("body")
+	if was == "" || b == nil {
+		return
 	}
+	b.pairs = slices.DeleteFunc(b.pairs, func(p pair) bool {
+		if p.key == was || !slices.Contains(bodyKinds, p.key) {
+			return false
+		}
+		r.add("E-412", p.at, join(path, "body."+p.key), Finding{Message: "a load case cannot change the kind of body",
+			Found: quote(p.key), Expected: "changes to " + was, Nearest: was})
+		b.bad = len(b.pairs) == 1
+		return true
+	})
 }
 
 func (v *value) children() []pair {

@@ -20,8 +20,12 @@ type Defaults struct {
 	Altitude string
 }
 
-// maxFindings ends a hopeless list.
-const maxFindings = 100
+// A hopeless list of findings is cut: maxKept are kept to be sorted,
+// maxFindings are shown.
+const (
+	maxFindings = 100
+	maxKept     = 1000
+)
 
 // reader gathers what is wrong with one file.
 type reader struct {
@@ -29,6 +33,8 @@ type reader struct {
 	lines    []string
 	findings []Finding
 	seen     map[string]bool
+	dropped  int      // findings beyond maxKept
+	tooDeep  bool     // the tree was cut off
 	faces    []string // faces of the body of the load case being checked
 }
 
@@ -76,7 +82,7 @@ func (r *reader) read(root *value, d Defaults, f *File) {
 	described := newBuilder(r, base)
 	described.build()
 	f.Inputs = described.inputs
-	if loads == nil || loads.shape != sequence || len(loads.items) == 0 {
+	if loads == nil || loads.bad || loads.shape != sequence || len(loads.items) == 0 {
 		described.report()
 		described.c.Load = Load{Name: AsDescribed}
 		f.Cases = []Case{described.c}
@@ -107,6 +113,10 @@ func (r *reader) add(code string, at place, path string, f Finding) {
 	if r.seen[id] {
 		return
 	}
+	if len(r.findings) >= maxKept && f.Severity == Warning || len(r.findings) >= 2*maxKept {
+		r.dropped++
+		return
+	}
 	r.seen[id] = true
 	r.findings = append(r.findings, f)
 }
@@ -119,9 +129,13 @@ func (r *reader) sorted() []Finding {
 		return a.Column - b.Column
 	})
 	if len(r.findings) > maxFindings {
-		rest := len(r.findings) - maxFindings
+		rest := len(r.findings) - maxFindings + r.dropped
 		last := r.findings[maxFindings-1]
-		r.findings = append(r.findings[:maxFindings], Finding{Code: "E-199", File: r.name, Line: last.Line, Column: 1, Width: 1, Source: last.Source,
+		severity := Warning
+		if HasErrors(r.findings) {
+			severity = Error
+		}
+		r.findings = append(r.findings[:maxFindings], Finding{Code: "E-199", Severity: severity, File: r.name, Line: last.Line, Column: 1, Width: 1, Source: last.Source,
 			Message: fmt.Sprintf("%d more findings are not shown", rest), Found: "very many findings", Expected: "a case file"})
 	}
 	return r.findings

@@ -94,7 +94,7 @@ func schemaOf(in *input) object {
 		}
 		s["type"], s["additionalProperties"], s["properties"], s["minProperties"] = "object", false, each, 1
 	case list:
-		s["type"], s["items"] = "array", schemaOf(in.each)
+		s["type"], s["items"], s["maxItems"] = "array", schemaOf(in.each), maxItems
 		if in.key != layers.key {
 			s["minItems"] = 1
 		}

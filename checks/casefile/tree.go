@@ -3,6 +3,7 @@ package casefile
 import (
 	"bytes"
 	"errors"
+	"fmt"
 	"strings"
 	"unicode/utf8"
 
@@ -15,8 +16,9 @@ import (
 // Bounds of a case file; the reader refuses more before it parses.
 const (
 	maxBytes   = 1 << 20
+	maxLines   = 5000
 	maxNesting = 32
-	maxMarks   = 512 // unclosed brackets, or list marks on one line, before parsing
+	maxMarks   = 64 // unclosed brackets, or list marks in a row, before parsing
 )
 
 // place is a stretch of text in the file.
@@ -102,6 +104,9 @@ func (r *reader) parse(data []byte) *value {
 		return nil
 	}
 	root := r.node(body, 0)
+	if r.tooDeep {
+		return nil
+	}
 	if root == nil || root.shape != mapping {
 		r.add("E-108", place{1, 1, 1}, "", Finding{Message: "the file does not begin with a key such as title:",
 			Found: "other text", Expected: "title: ... on a line of its own"})
@@ -115,6 +120,11 @@ func (r *reader) acceptable(data []byte) bool {
 	if len(data) > maxBytes {
 		r.add("E-101", place{1, 1, 1}, "", Finding{Message: "the file is larger than 1 MiB",
 			Found: byteCount(len(data)), Expected: "at most " + byteCount(maxBytes)})
+		return false
+	}
+	if len(r.lines) > maxLines {
+		r.add("E-101", place{maxLines + 1, 1, 1}, "", Finding{Message: "the file has too many lines",
+			Found: fmt.Sprintf("%d lines", len(r.lines)), Expected: fmt.Sprintf("at most %d", maxLines)})
 		return false
 	}
 	for i, line := range r.lines {
@@ -178,6 +188,8 @@ func tooDeep(lines []string) (line, column int) {
 				depth = max(0, depth-1)
 			case c == ' ' && strings.ContainsRune("-?:", before):
 				marks++
+			case c != ' ' && !strings.ContainsRune("-?:", c):
+				marks = 0
 			}
 			if before = c; depth > maxMarks || marks > maxMarks {
 				return i + 1, j + 1
@@ -213,7 +225,7 @@ func (r *reader) oneDocument(file *ast.File) ast.Node {
 			continue
 		}
 		if _, directive := d.Body.(*ast.DirectiveNode); directive || body != nil {
-			r.add("E-104", r.at(d.Body.GetToken()), "", Finding{Message: "the file holds more than one document",
+			r.add("E-104", r.start(d.Body), "", Finding{Message: "the file holds more than one document",
 				Found: "a second document or a directive", Expected: "one case in one file"})
 			return nil
 		}
@@ -240,6 +252,7 @@ func (r *reader) at(t *token.Token) place {
 // node reduces a node of the parser. It returns nil after a finding.
 func (r *reader) node(n ast.Node, depth int) *value {
 	if depth > maxNesting {
+		r.tooDeep = true
 		r.add("E-107", r.at(n.GetToken()), "", tooDeepFinding)
 		return nil
 	}
@@ -247,8 +260,8 @@ func (r *reader) node(n ast.Node, depth int) *value {
 	case *ast.MappingNode:
 		return r.mapping(n, depth)
 	case *ast.MappingValueNode:
-		v := &value{shape: mapping, at: r.at(n.Key.GetToken())}
-		r.addPair(v, n, depth)
+		v := &value{shape: mapping, at: r.start(n)}
+		r.addPair(v, n, map[string]place{}, depth)
 		return v
 	case *ast.SequenceNode:
 		v := &value{shape: sequence, at: r.at(n.Start)}
@@ -279,14 +292,29 @@ func (r *reader) nodeOr(n ast.Node, depth int) *value {
 }
 
 func (r *reader) mapping(n *ast.MappingNode, depth int) *value {
-	v := &value{shape: mapping, flow: n.IsFlowStyle, at: r.at(n.Start)}
+	v := &value{shape: mapping, flow: n.IsFlowStyle, at: r.start(n)}
+	first := map[string]place{}
 	for _, p := range n.Values {
-		r.addPair(v, p, depth)
+		r.addPair(v, p, first, depth)
 	}
 	return v
 }
 
-func (r *reader) addPair(v *value, n *ast.MappingValueNode, depth int) {
+// start is where a node begins; a mapping in block style begins at its first key.
+func (r *reader) start(n ast.Node) place {
+	switch n := n.(type) {
+	case *ast.MappingNode:
+		if !n.IsFlowStyle && len(n.Values) > 0 {
+			return r.start(n.Values[0])
+		}
+	case *ast.MappingValueNode:
+		return r.at(n.Key.GetToken())
+	}
+	return r.at(n.GetToken())
+}
+
+// addPair adds a key with its value; first holds the places of the keys so far.
+func (r *reader) addPair(v *value, n *ast.MappingValueNode, first map[string]place, depth int) {
 	key := n.Key.GetToken()
 	if _, merge := n.Key.(*ast.MergeKeyNode); merge || key == nil {
 		r.foreign(n.Key)
@@ -299,11 +327,12 @@ func (r *reader) addPair(v *value, n *ast.MappingValueNode, depth int) {
 		return
 	}
 	at := r.at(key)
-	if first := v.pair(key.Value); first != nil {
+	if was, twice := first[key.Value]; twice {
 		r.add("E-203", at, key.Value, Finding{Message: "the key " + quote(key.Value) + " stands here twice",
-			Found: quote(key.Value) + " again", Expected: "each key once", Help: "the first one is on " + lineWord(first.at.line)})
+			Found: quote(key.Value) + " again", Expected: "each key once", Help: "the first one is on " + lineWord(was.line)})
 		return
 	}
+	first[key.Value] = at
 	v.pairs = append(v.pairs, pair{key.Value, at, r.nodeOr(n.Value, depth)})
 }
 

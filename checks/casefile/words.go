@@ -34,8 +34,8 @@ func nearest(typed string, words []string) string {
 			best, bestAt = w, d
 		}
 	}
-	if best == "" && len(low) >= 3 {
-		best = containing(low, words)
+	if holds := containing(low, words); holds != "" && bestAt > 2 {
+		return holds
 	}
 	return best
 }
@@ -50,7 +50,7 @@ func leading(name string, n int) string {
 func containing(low string, words []string) string {
 	best := ""
 	for _, w := range words {
-		if holdsAll(strings.ToLower(w), strings.Fields(low)) && (best == "" || len(w) < len(best)) {
+		if len(low) >= 3 && holdsAll(strings.ToLower(w), strings.Fields(low)) && (best == "" || len(w) < len(best)) {
 			best = w
 		}
 	}
@@ -90,9 +90,9 @@ func distance(a, b string, limit int) int {
 	return last[len(y)]
 }
 
-// oneOf lists words for the "expected" of a finding, at most eight.
+// oneOf lists words for the "expected" of a finding, at most 15.
 func oneOf(words []string) string {
-	const most = 8
+	const most = 15
 	between := ", "
 	if slices.ContainsFunc(words, func(w string) bool { return strings.Contains(w, ",") }) {
 		between = "; "
@@ -100,7 +100,7 @@ func oneOf(words []string) string {
 	if len(words) <= most {
 		return strings.Join(words, between)
 	}
-	return strings.Join(words[:most], between) + fmt.Sprintf(" or one of %d more", len(words)-most)
+	return strings.Join(words[:most], between) + fmt.Sprintf(" and %d more", len(words)-most)
 }
 
 // facesOf lists the faces of a body, as the geometry names them.

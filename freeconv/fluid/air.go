@@ -6,7 +6,7 @@ import "math"
 // viscosity and conductivity those of Lemmon & Jacobsen 2004.
 //
 // Range 150..2000 K. The upper end is that of both papers. The lower end is
-// where the density series, cut after its first term, is still within 0.05 %
+// where the density series, cut after its first term, is still within 0.01 %
 // at atmospheric pressure; the papers themselves go lower. Pressure is held
 // within 1 kPa..1 MPa for the same reason.
 //

@@ -1,0 +1,473 @@
+package table
+
+import (
+	"cmp"
+	"fmt"
+	"math"
+	"slices"
+	"strings"
+
+	"stillair/checks"
+	"stillair/checks/unit"
+)
+
+// meaning says what a verdict says, in one sentence.
+var meaning = map[checks.Verdict]string{
+	checks.Pass:            "every calculated result meets its limit, uncertainty included",
+	checks.ConditionalPass: "every calculated result meets its limit, but not every one with its uncertainty included",
+	checks.ConditionalFail: "a calculated result does not meet its limit, by less than its uncertainty",
+	checks.Fail:            "a calculated result does not meet its limit by more than its uncertainty",
+	checks.None:            "temperatures only, nothing was judged",
+	checks.NoResult:        "at least one load case has no valid result",
+}
+
+func (p *page) head() {
+	c := p.o.Case
+	title := clean(c.Title)
+	if c.Tag != "" {
+		title += "   [" + clean(c.Tag) + "]"
+	}
+	p.line("%s", title)
+	p.sayVerdict("", p.o.Verdict, ": "+meaning[p.o.Verdict]+".")
+	if p.o.Governs != "" && len(p.o.Loads) > 1 {
+		p.say("", "Governing load case: "+p.o.Governs+".")
+	}
+	if p.opt.Partial != "" {
+		p.say("", p.opt.Partial)
+	}
+}
+
+// compare puts the load cases side by side, one line each.
+func (p *page) compare() {
+	if len(p.o.Loads) < 2 {
+		return
+	}
+	p.heading("Load cases (* governs)")
+	inside := p.hasInside()
+	heads := []string{" ", "load case", "verdict"}
+	if inside {
+		heads = append(heads, ".inside air "+p.unit(unit.Temperature))
+	}
+	heads = append(heads, ".hottest face "+p.unit(unit.Temperature), "at",
+		".heat "+p.unit(unit.Power), ".margin "+p.unit(unit.TemperatureDifference), "decided by")
+	g := newGrid(heads...)
+	for i := range p.o.Loads {
+		l := &p.o.Loads[i]
+		v := loadVerdict(l)
+		g.add(p.compareRow(l, v, inside)...)
+		g.paintLast(2, paint(v))
+	}
+	p.grid(g)
+}
+
+func (p *page) compareRow(l *checks.LoadOutcome, v checks.Verdict, inside bool) []string {
+	row := []string{star(l.Governing), clean(l.Name), verdictWord(v)}
+	if inside {
+		row = append(row, p.tempAt(l, "inside air"))
+	}
+	hot, at := p.hottest(l)
+	heat := ""
+	if l.Status == checks.Converged {
+		heat = number(p.value(unit.Power, l.HeatW), 1)
+	}
+	row = append(row, hot, at, heat)
+	j := deciding(l)
+	if j == nil {
+		return append(row, "", "")
+	}
+	margin := p.value(unit.TemperatureDifference, j.MarginK)
+	return append(row, number(margin, visible(1, margin)), clean(j.At+": "+j.Limit))
+}
+
+func (p *page) hasInside() bool {
+	for _, l := range p.o.Loads {
+		for _, t := range l.Temps {
+			if t.At == "inside air" {
+				return true
+			}
+		}
+	}
+	return false
+}
+
+func (p *page) tempAt(l *checks.LoadOutcome, at string) string {
+	for _, t := range l.Temps {
+		if t.At == at {
+			return number(p.value(unit.Temperature, t.K), 1)
+		}
+	}
+	return ""
+}
+
+func (p *page) hottest(l *checks.LoadOutcome) (text, at string) {
+	best := math.Inf(-1)
+	for _, t := range l.Temps {
+		if t.Kind == "outer surface" && t.K > best {
+			best, at = t.K, t.At
+			text = number(p.value(unit.Temperature, t.K), 1)
+		}
+	}
+	return text, at
+}
+
+// rank orders verdicts from best to worst.
+var rank = map[checks.Verdict]int{
+	checks.None: 0, checks.Pass: 1, checks.ConditionalPass: 2,
+	checks.ConditionalFail: 3, checks.Fail: 4, checks.NoResult: 5,
+}
+
+// loadVerdict is the worst verdict of one load case.
+func loadVerdict(l *checks.LoadOutcome) checks.Verdict {
+	if l.Status != checks.Converged {
+		return checks.NoResult
+	}
+	worst := checks.None
+	for _, j := range l.Verdicts {
+		if rank[j.Verdict] > rank[worst] {
+			worst = j.Verdict
+		}
+	}
+	return worst
+}
+
+// deciding is the check that decides a load case: the worst verdict, then the
+// smallest margin.
+func deciding(l *checks.LoadOutcome) *checks.Judged {
+	var best *checks.Judged
+	for i := range l.Verdicts {
+		j := &l.Verdicts[i]
+		if best == nil || rank[j.Verdict] > rank[best.Verdict] ||
+			rank[j.Verdict] == rank[best.Verdict] && j.MarginK < best.MarginK {
+			best = j
+		}
+	}
+	return best
+}
+
+func star(governs bool) string {
+	if governs {
+		return "*"
+	}
+	return " "
+}
+
+// load shows one load case in full.
+func (p *page) load(l *checks.LoadOutcome) {
+	title := "Load case: " + clean(l.Name)
+	if l.Purpose != "" {
+		title += " (for " + clean(l.Purpose) + ")"
+	}
+	if l.Governing && len(p.o.Loads) > 1 {
+		title += "   * governs"
+	}
+	p.heading(title)
+	for _, c := range l.Changed {
+		p.say("  changed: ", c.Label+" "+c.Typed)
+	}
+	if l.Status != checks.Converged {
+		p.sayVerdict("  ", checks.NoResult, " ("+string(l.Status)+"): "+l.Message)
+		return
+	}
+	p.temperatures(l)
+	p.heat(l)
+	p.films(l)
+	p.checks(l)
+	p.effects(l)
+	p.second(l)
+	p.solution(l)
+	for _, n := range l.Notes {
+		p.say("  note: ", n)
+	}
+}
+
+func (p *page) temperatures(l *checks.LoadOutcome) {
+	if len(l.Temps) == 0 {
+		return
+	}
+	us := make([]float64, 0, 2*len(l.Temps))
+	for _, t := range l.Temps {
+		us = append(us, p.value(unit.TemperatureDifference, t.MinusK), p.value(unit.TemperatureDifference, t.PlusK))
+	}
+	d := decimalsFor(us...)
+	k := p.unit(unit.TemperatureDifference)
+	several := len(p.o.Loads) > 1
+	if several {
+		p.heading("  Temperatures (* no load case is worse)")
+	} else {
+		p.heading("  Temperatures")
+	}
+	g := newGrid(" ", "at", "."+p.unit(unit.Temperature), ".- "+k, ".+ "+k, "of")
+	for _, t := range l.Temps {
+		g.add(star(t.Governing && several), clean(t.At), number(p.value(unit.Temperature, t.K), d),
+			up(p.value(unit.TemperatureDifference, t.MinusK), d),
+			up(p.value(unit.TemperatureDifference, t.PlusK), d), t.Kind)
+	}
+	p.grid(g)
+}
+
+func (p *page) heat(l *checks.LoadOutcome) {
+	if len(l.Heat) == 0 {
+		return
+	}
+	p.heading("  Heat paths (share of the heat that reaches air and surroundings)")
+	g := newGrid("by", "."+p.unit(unit.Power), ".share %", "path")
+	for _, h := range l.Heat {
+		share := ""
+		if h.Final {
+			share = number(100*h.Share, 1)
+		}
+		g.add(h.By, number(p.value(unit.Power, h.W), 1), share, clean(h.From+" → "+h.To))
+	}
+	p.grid(g)
+}
+
+func (p *page) films(l *checks.LoadOutcome) {
+	if len(l.Films) == 0 {
+		return
+	}
+	p.heading("  Air films (stillair methods ID tells more about a method)")
+	g := newGrid("at", "side", "method", ".L "+p.unit(unit.Length), "Ra", ".Nu",
+		".h "+p.unit(unit.Coefficient), "range")
+	for _, f := range l.Films {
+		inRange := "within"
+		if !f.InRange {
+			inRange = "OUTSIDE"
+		}
+		g.add(clean(f.At), f.Side, f.MethodID, number(p.value(unit.Length, f.LengthM), 1),
+			power(f.Ra), number(f.Nu, 2), number(p.value(unit.Coefficient, f.H), 2), inRange)
+	}
+	p.grid(g)
+	for _, f := range l.Films {
+		if f.Range != "" {
+			p.say("  outside range: ", f.At+", "+f.Side+": "+f.Range)
+		}
+		for _, n := range f.Notes {
+			p.say("  film: ", f.At+", "+f.Side+": "+n)
+		}
+	}
+}
+
+func (p *page) checks(l *checks.LoadOutcome) {
+	if len(l.Verdicts) == 0 {
+		p.heading("  Checks")
+		p.line("  no limit applies to this load case")
+		return
+	}
+	d := p.checkDecimals(l)
+	t, k := p.unit(unit.Temperature), p.unit(unit.TemperatureDifference)
+	p.heading("  Checks (* governs)")
+	g := newGrid(" ", "at", ".limit "+t, ".value "+t, ".± "+k, ".margin "+k, "verdict", "limit [source]")
+	var sources []string
+	for _, j := range l.Verdicts {
+		n := indexOrAdd(&sources, source(j))
+		g.add(star(j.Governing), clean(j.At), number(p.value(unit.Temperature, j.LimitK), d),
+			number(p.value(unit.Temperature, j.ValueK), d),
+			up(p.value(unit.TemperatureDifference, j.Uncertainty), min(d, 1)),
+			number(p.value(unit.TemperatureDifference, j.MarginK), d), verdictWord(j.Verdict), fmt.Sprintf("%s [%d]", clean(j.Limit), n+1))
+		g.paintLast(6, paint(j.Verdict))
+	}
+	p.grid(g)
+	for i, s := range sources {
+		p.say(fmt.Sprintf("  [%d] ", i+1), s)
+	}
+	if p.opt.Verbose {
+		p.steps(l)
+	}
+}
+
+// checkDecimals is one decimal, or as many as it takes that no margin which is
+// not zero reads as zero: the verdict must be visible in the numbers.
+func (p *page) checkDecimals(l *checks.LoadOutcome) int {
+	d := 1
+	for _, j := range l.Verdicts {
+		d = visible(d, p.value(unit.TemperatureDifference, j.MarginK))
+	}
+	return d
+}
+
+// visible raises the decimals d until v does not round to zero, to 4 at most.
+func visible(d int, v float64) int {
+	for v != 0 && d < 4 && math.Abs(v) < 0.5*math.Pow10(-d) {
+		d++
+	}
+	return d
+}
+
+// source is where a limit comes from and how far that is known.
+func source(j checks.Judged) string {
+	parts := []string{}
+	for _, s := range []string{j.Source, j.Why} {
+		if s != "" && !slices.ContainsFunc(parts, func(said string) bool { return strings.Contains(said, s) }) {
+			parts = append(parts, s)
+		}
+	}
+	text := cmp.Or(strings.Join(parts, "; "), "no source given")
+	if j.Confidence != "" {
+		text += " (confidence in the number: " + j.Confidence + ")"
+	}
+	return text
+}
+
+func indexOrAdd(list *[]string, s string) int {
+	if i := slices.Index(*list, s); i >= 0 {
+		return i
+	}
+	*list = append(*list, s)
+	return len(*list) - 1
+}
+
+// steps tells, once each, how a threshold was found, and how probable it is
+// that a limit is met.
+func (p *page) steps(l *checks.LoadOutcome) {
+	var told []string
+	for _, j := range l.Verdicts {
+		for _, s := range j.Steps {
+			if !slices.Contains(told, s) {
+				told = append(told, s)
+				p.say("  threshold: ", s)
+			}
+		}
+	}
+	for _, j := range l.Verdicts {
+		p.say("  probability: ", fmt.Sprintf("%s, %s: met with %s %% (normal law, ± read as two standard deviations)",
+			j.At, j.Limit, number(100*j.Conformance, 1)))
+	}
+}
+
+// effects shows what moves the governing temperature most.
+func (p *page) effects(l *checks.LoadOutcome) {
+	rows := slices.Clone(l.Effects)
+	at := governingAt(l)
+	if !p.opt.Verbose {
+		rows = slices.DeleteFunc(rows, func(e checks.Effect) bool { return e.At != at })
+	}
+	if len(rows) == 0 {
+		return
+	}
+	slices.SortStableFunc(rows, func(a, b checks.Effect) int {
+		return cmp.Or(cmp.Compare(a.At, b.At), cmp.Compare(size(b), size(a)))
+	})
+	if !p.opt.Verbose && len(rows) > 5 {
+		rows = rows[:5]
+	}
+	k := p.unit(unit.TemperatureDifference)
+	p.heading("  What matters most (one input shifted at a time)")
+	g := newGrid("at", ".up "+k, ".down "+k, "shift", "input")
+	for _, e := range rows {
+		g.add(clean(e.At), number(p.value(unit.TemperatureDifference, e.UpK), 2),
+			number(p.value(unit.TemperatureDifference, e.DownK), 2), clean(e.Shift), clean(e.Of))
+	}
+	p.grid(g)
+}
+
+func size(e checks.Effect) float64 { return math.Max(math.Abs(e.UpK), math.Abs(e.DownK)) }
+
+// governingAt is the temperature that decides the load case, or the first one.
+func governingAt(l *checks.LoadOutcome) string {
+	if j := deciding(l); j != nil {
+		return j.At
+	}
+	if len(l.Effects) > 0 {
+		return l.Effects[0].At
+	}
+	return ""
+}
+
+// second compares with the other set of published correlations.
+func (p *page) second(l *checks.LoadOutcome) {
+	s := l.Second
+	if s == nil {
+		return
+	}
+	p.heading("  Second method")
+	if s.Status != checks.Converged {
+		p.say("  ", "no result: "+string(s.Status))
+		return
+	}
+	p.say("  ", strings.Join(s.Methods, ", "))
+	t, k := p.unit(unit.Temperature), p.unit(unit.TemperatureDifference)
+	g := newGrid("at", ".first "+t, ".second "+t, ".difference "+k)
+	for _, r := range s.Rows {
+		if !p.opt.Verbose && r.At != governingAt(l) {
+			continue
+		}
+		g.add(clean(r.At), number(p.value(unit.Temperature, r.FirstK), 1), number(p.value(unit.Temperature, r.K), 1),
+			number(p.value(unit.TemperatureDifference, r.DiffK), 1))
+	}
+	if len(g.rows) > 1 {
+		p.grid(g)
+	}
+}
+
+// solution says how the balance was solved and how well it closes.
+func (p *page) solution(l *checks.LoadOutcome) {
+	p.heading("  Solution")
+	p.say("  ", fmt.Sprintf("%s in %d iterations; largest heat left over at any point %s W; air pressure %s",
+		l.Status, l.Iterations, power(l.ClosureW), p.opt.Units.Show(unit.Pressure, l.PressurePa, 2)))
+	if c := l.CrossCheck; c.Iterations > 0 {
+		agree := "agrees"
+		if !c.Agrees {
+			agree = "DOES NOT AGREE"
+		}
+		p.say("  ", fmt.Sprintf("plain damped substitution %s: largest difference %s K after %d iterations",
+			agree, power(c.MaxDiffK), c.Iterations))
+	}
+	if l.DewPointK > 0 {
+		p.say("  ", "dew point "+p.opt.Units.Show(unit.Temperature, l.DewPointK, 1))
+	}
+}
+
+func (p *page) assumptions() {
+	if len(p.o.Assumptions) > 0 {
+		p.heading("Taken for granted")
+		for _, a := range p.o.Assumptions {
+			p.say("  - ", a)
+		}
+	}
+	if len(p.o.Assumed) == 0 {
+		return
+	}
+	p.heading("Assumed, because the case does not say")
+	for _, a := range p.o.Assumed {
+		text := a.Label + ": " + cmp.Or(a.Typed, a.SI)
+		if a.Source != "" {
+			text += " (" + a.Source + ")"
+		}
+		p.say("  - ", text)
+	}
+}
+
+func (p *page) warnings() {
+	if p.o.File == nil || len(p.o.File.Warnings) == 0 {
+		return
+	}
+	p.heading("Warnings about the case file")
+	for _, w := range p.o.File.Warnings {
+		p.say("  - ", fmt.Sprintf("%s: line %d: %s", w.Code, w.Line, w.Message))
+	}
+}
+
+// cautions prints the first few; the note carries all of them.
+func (p *page) cautions() {
+	if len(p.o.Cautions) == 0 {
+		return
+	}
+	p.heading("Cautions: a burn threshold or touch limit was judged")
+	shown := p.o.Cautions
+	if !p.opt.Verbose && len(shown) > 3 {
+		shown = shown[:3]
+	}
+	for _, c := range shown {
+		p.say("  - ", c)
+	}
+	if n := len(p.o.Cautions) - len(shown); n > 0 {
+		p.say("  - ", fmt.Sprintf("%d more: see the calculation note, or --verbose.", n))
+	}
+}
+
+func (p *page) foot() {
+	p.line("")
+	p.say("", fmt.Sprintf("%s %s, data %s; case file SHA-256 %s", p.o.Program.Name, p.o.Program.Version,
+		p.o.Program.Data, p.o.Case.SHA256))
+	p.say("", "± is about two standard deviations. Calculated averages of each face; verify by measurement before relying on them.")
+}
