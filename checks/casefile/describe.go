@@ -120,7 +120,7 @@ var (
 	heights        = &span{-500, 11000, false, "-500 m to 11 000 m, the troposphere"}
 	pressures      = &span{1000, 1e6, false, "1 kPa to 1 MPa"}
 	factors        = &span{1, 3, false, "1 to 3"}
-	contactTimes   = &span{limit.ShortestContact, 1e6, false, "0.5 s, where burn thresholds begin, to 1e6 s"}
+	contactTimes   = &span{limit.ShortestContact, 1e6, false, "0.5 s, where burn thresholds begin, to 1 000 000 s"}
 )
 
 // Vocabularies from the catalogues.

@@ -195,3 +195,41 @@ func TestTurnedAxis(t *testing.T) {
 		t.Error(formatted(findings))
 	}
 }
+
+// Where a limit can stand depends on the body and on its covered faces.
+func TestPlacesOfLimits(t *testing.T) {
+	box := "title: x\nsurroundings: {air: 30 °C}\nbody: {box: {width: 1 m, height: 1 m, depth: 1 m, emissivity: 0.9, faces: {back: wall}}}\nheat: 1 W\nlimits:\n  - {"
+	for limit, want := range map[string]string{
+		"at: back, most: 60 °C, why: a":                   "a covered face",
+		"at: inside air, touch: wood, contact: 2 s":       "needs a face",
+		"at: inside air, condensation: none":              "needs a face",
+		"at: contents, most: 60 °C, why: a":               "a box has no contents",
+		"at: side, most: 60 °C, why: a":                   "a box has no side",
+		"at: upper zone, most: 60 °C, source: IEC X:2020": "",
+		"at: top, rule: c1055-60c":                        "",
+	} {
+		_, findings := Read("a", []byte(box+limit+"}\n"), Defaults{})
+		text := formatted(findings)
+		if want == "" && len(findings) > 0 || !strings.Contains(text, want) {
+			t.Errorf("%s: want %q in\n%s", limit, want, text)
+		}
+	}
+}
+
+// One slip makes one finding: a misspelt key counts as the key it stands for.
+func TestOneSlipOneFinding(t *testing.T) {
+	good := string(read(t, "testdata/pipe-us.yaml"))
+	for _, slip := range [][2]string{{"title:", "titel:"}, {"air: 86", "ari: 86"}, {"body:", "bdoy:"}, {"pipe:", "pip:"}, {"diameter:", "diametre:"},
+		{"contents:", "content:"}, {"finish:", "finsh:"}, {"thickness: 1.5", "thicknes: 1.5"}, {"most:", "mots:"}, {"why:", "whi:"}, {"at:", "att:"}} {
+		_, findings := Read("a", []byte(strings.Replace(good, slip[0], slip[1], 1)), Defaults{})
+		errors := 0
+		for _, f := range findings {
+			if f.Severity == Error {
+				errors++
+			}
+		}
+		if errors != 1 {
+			t.Errorf("%s: %d errors\n%s", slip[1], errors, formatted(findings))
+		}
+	}
+}

@@ -183,7 +183,7 @@ func (in *input) wordSchema(s object) {
 func (in *input) textSchema(s object) {
 	s["type"], s["maxLength"] = []string{"string", "number", "boolean", "null"}, maxText
 	if in.required {
-		s["type"], s["minLength"] = []string{"string", "number", "boolean"}, 1
+		s["type"], s["pattern"] = []string{"string", "number", "boolean"}, `\S`
 	}
 }
 

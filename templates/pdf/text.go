@@ -249,8 +249,35 @@ func (s *setter) endLine() {
 	if len(s.cur.pieces) == 0 {
 		return
 	}
+	s.cur.pieces = s.joined(s.cur.pieces)
 	s.lines = append(s.lines, s.cur)
 	s.cur = line{}
+}
+
+// joined makes one piece of neighbours in the same face, so that the file
+// holds whole phrases with their spaces for search and copying.
+func (s *setter) joined(pieces []piece) []piece {
+	var out []piece
+	for _, p := range pieces {
+		if len(out) == 0 || p.run.Inline != nil || out[len(out)-1].run.Inline != nil {
+			out = append(out, p)
+			continue
+		}
+		last := &out[len(out)-1]
+		gap := p.x - last.x - last.w
+		space := s.d.TextWidth(" ", s.st.With(p.run.Face))
+		switch {
+		case p.run.Face != last.run.Face || p.run.Link != last.run.Link:
+			out = append(out, p)
+			continue
+		case gap > space/2:
+			last.run.Text += " " + p.run.Text
+		default:
+			last.run.Text += p.run.Text
+		}
+		last.w = p.x + p.w - last.x
+	}
+	return out
 }
 
 // height is the room the line takes with a leading for its text.

@@ -14,6 +14,7 @@ var files embed.FS
 
 // kinds lists the starters in the order a newcomer should meet them.
 var kinds = []Kind{
+	{"indoor-panel", "sealed control panel in a switch room: warm day, ventilation failed, cold start"},
 	{"panel", "sealed control panel outdoors: sun, shade, winter and humid night"},
 	{"cabinet", "indoor cabinet between neighbours, US units"},
 	{"steam-pipe", "insulated steam pipe with a metal jacket"},
