@@ -428,39 +428,41 @@ const (
 
 // outside reads emissivity and solar absorptance, typed or from the finish.
 func (b *builder) outside() {
-	kind := b.c.Body.Kind
-	if kind == "" {
+	p := b.root.get("body").pair(b.c.Body.Kind)
+	if p == nil || p.value.shape != mapping {
 		return
 	}
-	p := b.root.get("body").pair(kind)
-	v, path := p.value, "body."+kind
-	if v.shape != mapping {
-		return
-	}
-	f, named := b.finish(v.get("finish"), join(path, "finish"))
-	around := typedEmissivity
-	if u := b.c.Uncertainty.Emissivity; u.Set {
-		around = u.SI
-	}
-	typed := b.quantity(emissivity, v.get("emissivity"), join(path, "emissivity"))
+	path := "body." + p.key
+	f, named := b.finish(p.value.get("finish"), join(path, "finish"))
+	b.emissivity(p, f, named, path)
+	v := p.value
+	typed := b.quantity(absorptance, v.get("absorptance"), join(path, "absorptance"))
 	switch {
 	case typed.Set:
-		b.c.Body.Emissivity = aroundTyped(typed, around)
+		b.c.Body.Absorb = aroundTyped(typed, typedAbsorptance)
+	case named && f.HasAbsorb:
+		b.c.Body.Absorb = ofFinish(f, v.get("finish"), f.AbsorbLow, f.Absorb, f.AbsorbHigh)
+	}
+}
+
+// emissivity reads the typed emissivity or that of the finish; one is needed.
+func (b *builder) emissivity(p *pair, f radiation.Finish, named bool, path string) {
+	v, u := p.value, b.c.Uncertainty.Emissivity
+	typed := b.quantity(emissivity, v.get("emissivity"), join(path, "emissivity"))
+	switch {
+	case typed.Set && u.Set:
+		b.c.Body.Emissivity = aroundTyped(typed, u.SI)
+	case typed.Set:
+		b.c.Body.Emissivity = aroundTyped(typed, typedEmissivity)
 	case named:
 		b.c.Body.Finish = f.Name
 		b.c.Body.Emissivity = ofFinish(f, v.get("finish"), f.Low, f.Typical, f.High)
-		if b.c.Uncertainty.Emissivity.Set {
-			b.c.Body.Emissivity.around(around)
+		if u.Set {
+			b.c.Body.Emissivity.around(u.SI)
 		}
 		b.finishWarnings(f, v.get("finish"), join(path, "finish"))
 	case v.get("finish") == nil && v.get("emissivity") == nil && !v.meant["finish"] && !v.meant["emissivity"]:
 		b.add("E-410", p.at, path, Finding{Message: "neither a finish nor an emissivity is given", Found: "neither", Expected: "finish: " + finish.example + ", or emissivity: 0.9"})
-	}
-	typed = b.quantity(absorptance, v.get("absorptance"), join(path, "absorptance"))
-	if typed.Set {
-		b.c.Body.Absorb = aroundTyped(typed, typedAbsorptance)
-	} else if named && f.HasAbsorb {
-		b.c.Body.Absorb = ofFinish(f, v.get("finish"), f.AbsorbLow, f.Absorb, f.AbsorbHigh)
 	}
 }
 

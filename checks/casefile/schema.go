@@ -78,21 +78,8 @@ type object = map[string]any
 func schemaOf(in *input) object {
 	s := object{"description": in.hover(), "examples": []any{exampleOf(in)}}
 	switch in.form {
-	case section:
-		s["type"], s["additionalProperties"] = "object", false
-		s["properties"], s["minProperties"] = properties(in), 1
-		if in.key == body.key {
-			s["maxProperties"] = 1
-		}
-		if must := in.mustHave(); len(must) > 0 {
-			s["required"] = must
-		}
-	case byName:
-		each := object{}
-		for _, name := range in.names {
-			each[name] = schemaOf(in.each)
-		}
-		s["type"], s["additionalProperties"], s["properties"], s["minProperties"] = "object", false, each, 1
+	case section, byName:
+		in.sectionSchema(s)
 	case list:
 		s["type"], s["items"], s["maxItems"] = "array", schemaOf(in.each), maxItems
 		if in.key != layers.key {
@@ -111,6 +98,20 @@ func schemaOf(in *input) object {
 	return s
 }
 
+func (in *input) sectionSchema(s object) {
+	keys := object{}
+	for _, key := range in.keys() {
+		keys[key] = schemaOf(in.child(key))
+	}
+	s["type"], s["additionalProperties"], s["properties"], s["minProperties"] = "object", false, keys, 1
+	if in.key == body.key {
+		s["maxProperties"] = 1
+	}
+	if must := in.mustHave(); len(must) > 0 {
+		s["required"] = must
+	}
+}
+
 // hover is what an editor shows: the sentence, the unit, the range, the default.
 func (in *input) hover() string {
 	parts := []string{in.help}
@@ -127,14 +128,6 @@ func (in *input) hover() string {
 		parts = append(parts, "Default: "+in.usual+" ("+in.why+").")
 	}
 	return strings.Join(parts, " ")
-}
-
-func properties(in *input) object {
-	p := object{}
-	for _, part := range in.parts {
-		p[part.key] = schemaOf(part)
-	}
-	return p
 }
 
 // mustHave lists the keys a section needs in every file. Air is left out: it

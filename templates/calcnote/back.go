@@ -81,11 +81,7 @@ func (n *note) identification() {
 
 // replaced reports characters of the case that the fonts cannot print.
 func (n *note) replaced() {
-	var list []string
-	for _, r := range n.unprintable() {
-		list = append(list, r)
-	}
-	if len(list) > 0 {
+	if list := n.unprintable(); len(list) > 0 {
 		n.textf("Characters of the case file that these fonts cannot print are shown as �: %s. The attached case file holds them unchanged.", strings.Join(list, ", "))
 	}
 }

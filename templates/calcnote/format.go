@@ -14,11 +14,10 @@ import (
 // notComputed stands where a number is missing; never a zero, never a blank.
 const notComputed = unit.NotComputed
 
-func (n *note) temp(k float64) string  { return n.sys.Show(unit.Temperature, k, 1) }
-func (n *note) diff(k float64) string  { return n.sys.Show(unit.TemperatureDifference, k, 1) }
-func (n *note) power(w float64) string { return n.sys.Show(unit.Power, w, 1) }
-func (n *note) tempUnit() string       { return n.sys.Unit(unit.Temperature) }
-func (n *note) diffUnit() string       { return n.sys.Unit(unit.TemperatureDifference) }
+func (n *note) temp(k float64) string { return n.sys.Show(unit.Temperature, k, 1) }
+func (n *note) diff(k float64) string { return n.sys.Show(unit.TemperatureDifference, k, 1) }
+func (n *note) tempUnit() string      { return n.sys.Unit(unit.Temperature) }
+func (n *note) diffUnit() string      { return n.sys.Unit(unit.TemperatureDifference) }
 
 // bare is a number as Show writes it, without its unit.
 func (n *note) bare(k unit.Kind, si float64, decimals int) string {

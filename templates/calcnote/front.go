@@ -201,7 +201,7 @@ func (n *note) emptyField(x, y, w, h float64) {
 func (n *note) verdictPanel() {
 	d := n.d
 	d.Y += 4
-	top := d.Y
+	top, page := d.Y, d.Page()
 	d.Y += 2.5
 	x := n.left() + 4
 	w := n.width() - 8
@@ -220,7 +220,9 @@ func (n *note) verdictPanel() {
 		d.Para(append([]pdf.Run{{Text: "Burn caution. ", Face: pdf.Bold}}, n.burnCaution()...), smallStyle, x, w)
 	}
 	d.Y += 2
-	d.Rect(n.left(), top, n.width(), d.Y-top, nil, 0.35, pdf.Black)
+	if d.Page() == page {
+		d.Rect(n.left(), top, n.width(), d.Y-top, nil, 0.35, pdf.Black)
+	}
 	d.Y += 1
 }
 
@@ -282,7 +284,21 @@ func (n *note) verdictSentences() []string {
 
 func (n *note) decisiveSentence(v checks.Judged, load string) string {
 	return fmt.Sprintf("%s Governing: load case “%s”, %s %s, limit %s (%s), margin %s.",
-		meaning[v.Verdict], load, v.At, n.pm(v.ValueK, v.Uncertainty), n.limitText(v), v.Source, n.diff(v.MarginK))
+		meaning[v.Verdict], load, v.At, n.pm(v.ValueK, v.Uncertainty), n.limitText(v), shortSource(v.Source), n.diff(v.MarginK))
+}
+
+// shortSource is the head of a long citation; the whole stands in the
+// references.
+func shortSource(s string) string {
+	const enough = 90
+	if r := []rune(s); len(r) > enough {
+		head, _, _ := strings.Cut(s, "; ")
+		if r = []rune(head); len(r) > enough {
+			return strings.TrimRight(string(r[:enough]), " ") + "…"
+		}
+		return head
+	}
+	return s
 }
 
 // limitText is a limit in words with its value when the words do not have it.

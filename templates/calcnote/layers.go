@@ -29,24 +29,39 @@ func (n *note) layersWorked() {
 		return
 	}
 	n.part(fmt.Sprintf("%s: wall and layers", capital(part.Face.Name)), 34)
+	n.runs(pdf.Run{Text: "The heat that reaches this face, "}, inline(`Q = \bar{k}\,S \left(T_1 - T_2\right)`), pdf.Run{Text: " for each layer:"})
 	var rows []pdf.Row
 	for i, l := range all {
-		rows = append(rows, n.layerRow(l, part.Slabs[i], paths[i]))
+		rows = append(rows, n.layerRow(l, part.Slabs[i], paths[i], n.smallestStep(paths)))
 	}
 	n.table([]pdf.Column{
 		{Head: "Layer, from the inside", Width: 50}, {Head: "t / mm", Width: 15, Align: pdf.AlignDecimal}, {Head: "S / m", Width: 20, Align: pdf.AlignDecimal},
 		{Head: "k mean / W/(m·K)", Width: 22, Align: pdf.AlignDecimal}, {Head: "T₁ / K", Width: 22, Align: pdf.AlignDecimal},
-		{Head: "T₂ / K", Width: 22, Align: pdf.AlignDecimal}, {Head: "Q = k S (T₁ − T₂) / W", Width: 24, Align: pdf.AlignDecimal}}, rows)
+		{Head: "T₂ / K", Width: 22, Align: pdf.AlignDecimal}, {Head: "Q / W", Width: 18, Align: pdf.AlignDecimal}}, rows)
 }
 
-func (n *note) layerRow(l casefile.Layer, s geometry.Slab, h checks.HeatPath) pdf.Row {
+// smallestStep is the smallest temperature step over the layers, K; it sets
+// the decimals of the table.
+func (n *note) smallestStep(paths []checks.HeatPath) float64 {
+	least := 1.0
+	for _, h := range paths {
+		t1, ok1 := n.tempAt(h.From)
+		t2, ok2 := n.tempAt(h.To)
+		if step := math.Abs(t1 - t2); ok1 && ok2 && step > 0 {
+			least = math.Min(least, step)
+		}
+	}
+	return least
+}
+
+func (n *note) layerRow(l casefile.Layer, s geometry.Slab, h checks.HeatPath, step float64) pdf.Row {
 	t1, ok1 := n.tempAt(h.From)
 	t2, ok2 := n.tempAt(h.To)
 	row := cells(layerName(l), plainDigits(1000*s.Thickness, 4), plainDigits(s.Factor(), 6), notComputed, notComputed, notComputed, plainDigits(h.W, 5))
 	if !ok1 || !ok2 {
 		return row
 	}
-	row.Cells[4], row.Cells[5] = pdf.C(kelvin(t1, t1-t2)), pdf.C(kelvin(t2, t1-t2))
+	row.Cells[4], row.Cells[5] = pdf.C(kelvin(t1, step)), pdf.C(kelvin(t2, step))
 	if l.Conductivity.Set {
 		row.Cells[3] = pdf.C(plainDigits(l.Conductivity.SI, 5))
 	} else if m, ok := material.Find(l.Material); ok {

@@ -31,11 +31,11 @@ const (
 func (n *note) methods() {
 	n.section("Methods")
 	n.balanceEquations()
-	n.part("Correlations in use", 40)
+	n.part("Correlations in use", 66)
 	for _, u := range n.used() {
 		n.correlation(u)
 	}
-	n.part("Air", 16)
+	n.part("Air", 30)
 	n.cited("Properties of dry air at the property temperature and the pressure stated: density ρ, specific heat, viscosity μ and conductivity k from published equations; the others follow from them.", fluid.Air.Sources()...)
 	n.formula(formulaProperties)
 	if !n.pressureTyped() {
@@ -60,7 +60,7 @@ func (n *note) balanceEquations() {
 	n.runs(pdf.Run{Text: "Free convection on a face at its mean temperature, with the characteristic length "}, inline(`L`), pdf.Run{Text: " and the property temperature of its correlation:"})
 	n.formula(formulaRayleigh, gravitySource)
 	n.formula(formulaFilm)
-	n.runs(pdf.Run{Text: "Radiation of a grey face of emissivity "}, inline(`\varepsilon`), pdf.Run{Text: " to surroundings at one radiant temperature "}, inline(`T_\mathrm{r}`), pdf.Run{Text: ":"})
+	n.runs(pdf.Run{Text: "Radiation of a grey face of emissivity "}, inline(`\varepsilon`), pdf.Run{Text: " to surroundings at "}, inline(`T_\mathrm{r}`), pdf.Run{Text: ":"})
 	n.formula(formulaRadiation, sigmaSource)
 	if n.loadsWith(hasSun) != "" {
 		n.runs(pdf.Run{Text: "Sun of irradiance "}, inline(`G`), pdf.Run{Text: " on a face of solar absorptance "}, inline(`\alpha_\mathrm{s}`), pdf.Run{Text: ":"})

@@ -229,7 +229,7 @@ func TestLayersCanBeRedone(t *testing.T) {
 		for _, part := range partsOf(l.Case.Body) {
 			paths := conduction(l.Heat, part.Face.Name)
 			for i := range min(len(all), len(paths)) {
-				row := n.layerRow(all[i], part.Slabs[i], paths[i])
+				row := n.layerRow(all[i], part.Slabs[i], paths[i], n.smallestStep(paths))
 				var v [7]float64
 				for j := 1; j < 7; j++ {
 					v[j], _ = strconv.ParseFloat(row.Cells[j].Runs[0].Text, 64)

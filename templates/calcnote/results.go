@@ -47,11 +47,11 @@ func (n *note) markGoverning(r pdf.Row, governing bool) pdf.Row {
 func closure(x float64) string { return plainDigits(x, 2) }
 
 func agrees(l checks.LoadOutcome) string {
-	if l.CrossCheck.Iterations == 0 {
-		return notComputed
-	}
 	if l.CrossCheck.Agrees {
 		return "yes"
+	}
+	if l.CrossCheck.Iterations == 0 {
+		return notComputed
 	}
 	return "no"
 }
@@ -83,7 +83,7 @@ const loadsATable = 5
 
 // results are the temperatures and heat flows of all load cases side by side.
 func (n *note) results() {
-	n.section("Results by load case")
+	n.sectionRoom("Results by load case", 72)
 	if !n.converged() {
 		n.text("Not computed: no load case has a valid result.")
 		return
@@ -292,7 +292,7 @@ func (n *note) limits() [][]judgedRow {
 
 func (n *note) limitRows(g []judgedRow) []pdf.Row {
 	first := g[0].v
-	head := capital(first.Limit) + ": " + first.Source
+	head := capital(first.Limit) + ": " + shortSource(first.Source)
 	if !strings.HasPrefix(first.Source, "project limit") {
 		head += " " + n.refs.marks(first.Source)
 	}

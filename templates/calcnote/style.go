@@ -10,7 +10,7 @@ import (
 // Four sizes, two families, one accent colour.
 var (
 	accent = pdf.Color{R: 0x1B, G: 0x4F, B: 0x72}
-	grey   = pdf.Color{R: 0x55, G: 0x55, B: 0x55}
+	grey   = pdf.Color{R: 0x44, G: 0x44, B: 0x44}
 	hair   = pdf.Color{R: 0xC4, G: 0xC8, B: 0xCC}
 	tint   = pdf.Color{R: 0xF1, G: 0xF3, B: 0xF5}
 	pale   = pdf.Color{R: 0xEF, G: 0xF0, B: 0xF2}
@@ -91,15 +91,20 @@ func (n *note) margin(baseline float64, s string) {
 
 // bullet is one item of a list.
 func (n *note) bullet(s string) {
-	n.d.Need(2 * bodyStyle.Leading())
+	n.together(s, measure-6)
 	n.d.Text(n.left()+1.5, n.d.Y+0.76*bodyStyle.Leading(), "–", bodyStyle)
 	n.d.Para(pdf.T(s), bodyStyle, n.left()+6, measure-6)
 	n.d.Y += 1
 }
 
+// together keeps a short paragraph on one page.
+func (n *note) together(s string, w float64) {
+	n.d.Need(min(n.d.ParaHeight(pdf.T(s), bodyStyle, w), 6*bodyStyle.Leading()))
+}
+
 // item is one numbered item of a list.
 func (n *note) item(number, s string) {
-	n.d.Need(2 * bodyStyle.Leading())
+	n.together(s, measure-10)
 	n.d.Text(n.left(), n.d.Y+0.76*bodyStyle.Leading(), number, bodyStyle)
 	n.d.Para(pdf.T(s), bodyStyle, n.left()+10, measure-10)
 	n.d.Y += 1.2

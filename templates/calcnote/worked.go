@@ -75,7 +75,7 @@ func (n *note) surface(f checks.FilmRow) {
 	}
 	n.part(fmt.Sprintf("%s, %s: %s", capital(f.At), f.Side, v.Kind), 56)
 	n.d.Y += 0.5
-	n.cited(fmt.Sprintf("%s; %s; %s.", f.Method, f.Length, v.Regime), v.Method.Citation)
+	n.cited(fmt.Sprintf("%s; %s; %s.", f.Method, strings.ReplaceAll(f.Length, " ", "\u00A0"), v.Regime), v.Method.Citation)
 	n.givens(f)
 	for _, line := range n.surfaceLines(f) {
 		n.display(line, "")

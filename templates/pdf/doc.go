@@ -85,6 +85,7 @@ type Doc struct {
 	anchors  []Anchor
 	links    map[string]int
 	replaced map[rune]int
+	latin    *[len(faces)][256]float64
 	err      error
 }
 
@@ -125,7 +126,8 @@ func pass(s Setup, draw func(*Doc), known []Anchor, total int) (*Doc, error) {
 	if err := addFonts(p); err != nil {
 		return nil, err
 	}
-	d := &Doc{setup: s, pdf: p, known: known, total: total, links: map[string]int{}, replaced: map[rune]int{}}
+	widths := latin()
+	d := &Doc{latin: &widths, setup: s, pdf: p, known: known, total: total, links: map[string]int{}, replaced: map[rune]int{}}
 	p.SetTitle(d.clean(s.Info.Title, Regular), true)
 	p.SetAuthor(d.clean(s.Info.Author, Regular), true)
 	p.SetSubject(d.clean(s.Info.Subject, Regular), true)

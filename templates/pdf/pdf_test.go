@@ -138,7 +138,7 @@ func TestDecimalPointsAreInLine(t *testing.T) {
 func TestHostileTextIsShownAndReported(t *testing.T) {
 	word := strings.Repeat("W", 5000)
 	r := build(t, setup(), func(d *Doc) {
-		for _, s := range []string{"emoji 😀", "bell \a", "bad \xff\xfe", "漢字", "Ελληνικά", "‮turned", word, "tab\tnew\nline", "\\)(("} {
+		for _, s := range []string{"emoji 😀", "bell \a", "bad \xff\xfe", "漢字", "Ελληνικά", "\u202eturned", word, "tab\tnew\nline", "\\)(("} {
 			d.Para(T(s), body, d.Left(), 60)
 			d.Table(Table{X: d.Left(), W: 80, Style: body, Columns: []Column{{Head: s, Width: 1}}, Rows: []Row{{Cells: []Cell{C(s)}}}})
 		}

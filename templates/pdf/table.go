@@ -107,12 +107,16 @@ func (g *grid) columns() {
 	for _, c := range g.t.Columns {
 		total += c.Width
 	}
-	room := g.t.W - gutter*float64(len(g.t.Columns)-1)
+	room := g.t.W
+	for i := range g.t.Columns {
+		room -= g.gap(i)
+	}
 	x := g.t.X
-	for _, c := range g.t.Columns {
+	for i, c := range g.t.Columns {
 		w := room * c.Width / total
+		x += g.gap(i)
 		g.x, g.w = append(g.x, x), append(g.w, w)
-		x += w + gutter
+		x += w
 	}
 	bold := g.t.Style.With(Bold)
 	for i, c := range g.t.Columns {
@@ -124,6 +128,18 @@ func (g *grid) columns() {
 		g.heads = append(g.heads, ls)
 		g.point = append(g.point, g.pointOf(i, c))
 	}
+}
+
+// gap is the room before a column; numbers need more before words.
+func (g *grid) gap(i int) float64 {
+	if i == 0 {
+		return 0
+	}
+	before, at := g.t.Columns[i-1].Align, g.t.Columns[i].Align
+	if at == AlignLeft && (before == AlignRight || before == AlignDecimal) {
+		return 1.8 * gutter
+	}
+	return gutter
 }
 
 func height(ls []line, st Style) float64 {

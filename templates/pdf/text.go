@@ -2,6 +2,7 @@ package pdf
 
 import (
 	"strings"
+	"sync"
 	"unicode/utf8"
 )
 
@@ -59,8 +60,25 @@ func (d *Doc) TextWidth(s string, st Style) float64 {
 	return w * st.Em()
 }
 
+// latin holds the advance widths of the commonest characters.
+var latin = sync.OnceValue(func() (w [len(faces)][256]float64) {
+	for f := range w {
+		for r := range w[f] {
+			w[f][r] = advanceOf(Face(f), rune(r))
+		}
+	}
+	return w
+})
+
 // advance is the width of one rune as clean will print it, in em.
 func (d *Doc) advance(f Face, r rune) float64 {
+	if r >= 0 && r < 256 {
+		return d.latin[f][r]
+	}
+	return advanceOf(f, r)
+}
+
+func advanceOf(f Face, r rune) float64 {
 	switch {
 	case r == '\u00ad':
 		return 0
@@ -80,14 +98,21 @@ func (d *Doc) font(st Style) {
 
 // Fit is the text cut to a width, with an ellipsis when it was cut.
 func (d *Doc) Fit(s string, st Style, w float64) string {
-	if d.TextWidth(s, st) <= w {
-		return s
+	room := w - d.TextWidth("…", st)
+	used, keep := 0.0, 0
+	for i, r := range s {
+		used += d.advance(st.Face, r) * st.Em()
+		if used > w {
+			return strings.TrimRight(s[:keep], " ") + "…"
+		}
+		if used <= room {
+			keep = i + utf8.RuneLen(r)
+			if r == utf8.RuneError {
+				keep = i + 1
+			}
+		}
 	}
-	runes := []rune(s)
-	for len(runes) > 0 && d.TextWidth(string(runes)+"…", st) > w {
-		runes = runes[:len(runes)-1]
-	}
-	return strings.TrimRight(string(runes), " ") + "…"
+	return s
 }
 
 // piece is part of a line that was laid out.
@@ -241,7 +266,9 @@ func (s *setter) chop(p piece) (rest piece, done bool) {
 	s.endLine()
 	rest = p
 	rest.run.Text = string(runes[n:])
-	rest.w = s.d.TextWidth(rest.run.Text, st)
+	if n > 0 {
+		rest.w = p.w - s.d.TextWidth(string(runes[:n]), st)
+	}
 	return rest, false
 }
 
