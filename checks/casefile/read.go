@@ -81,7 +81,7 @@ func (r *reader) read(root *value, d Defaults, f *File) {
 	loads := root.get("loads")
 	described := newBuilder(r, base)
 	described.build()
-	f.Inputs = described.inputs
+	defer func() { f.Inputs = needed(described.inputs, f.Cases) }()
 	if loads == nil || loads.bad || loads.shape != sequence || len(loads.items) == 0 {
 		described.report()
 		described.c.Load = Load{Name: AsDescribed}
@@ -96,6 +96,22 @@ func (r *reader) read(root *value, d Defaults, f *File) {
 	}
 	r.sameNames(loads)
 	r.condensation(f.Cases, root)
+}
+
+// needed leaves out the default uncertainties that no load case makes use of.
+func needed(inputs []Input, cases []Case) []Input {
+	unused := map[string]bool{}
+	for key, uses := range map[string]func(Case) bool{
+		"heat":         func(c Case) bool { return c.Heat.Set },
+		"contents":     func(c Case) bool { return c.Contents.Set },
+		"sun":          func(c Case) bool { return len(c.Surroundings.Sun) > 0 },
+		"inside":       func(c Case) bool { return c.Body.Kind == "box" },
+		"conductivity": func(c Case) bool { return c.Body.Wall != nil || len(c.Body.Layers) > 0 },
+		"thickness":    func(c Case) bool { return c.Body.Wall != nil || len(c.Body.Layers) > 0 },
+	} {
+		unused["uncertainty."+key] = !slices.ContainsFunc(cases, uses)
+	}
+	return slices.DeleteFunc(inputs, func(in Input) bool { return in.Assumption && unused[in.Path] })
 }
 
 // AsDescribed names the load case of a file without loads.

@@ -213,7 +213,11 @@ func (n *note) filmPlaces() []string {
 func (n *note) filmCell(l checks.LoadOutcome, place string) pdf.Cell {
 	for _, f := range l.Films {
 		if placeOf(f) == place {
-			s := n.bare(unit.Coefficient, f.H, 2)
+			decimals := 2
+			if n.sys == unit.US {
+				decimals = 3 // the unit is more than five times as large
+			}
+			s := n.bare(unit.Coefficient, f.H, decimals)
 			if !f.InRange {
 				s += " *"
 			}
@@ -258,8 +262,8 @@ func (n *note) checks() {
 		rows = append(rows, n.limitRows(g)...)
 	}
 	n.table([]pdf.Column{
-		{Head: "Load case", Width: 31}, {Head: "At", Width: 24}, {Head: "Limit", Width: 17, Align: pdf.AlignRight}, {Head: "Calculated ± U", Width: 30, Align: pdf.AlignRight},
-		{Head: "Margin", Width: 17, Align: pdf.AlignRight}, {Head: "Verdict", Width: 35}, {Head: "P", Width: 16, Align: pdf.AlignRight}}, rows)
+		{Head: "Load case", Width: 28}, {Head: "At", Width: 22}, {Head: "Limit", Width: 17, Align: pdf.AlignRight}, {Head: "Calculated ± U", Width: 36, Align: pdf.AlignRight},
+		{Head: "Margin", Width: 17, Align: pdf.AlignRight}, {Head: "Verdict", Width: 34}, {Head: "P", Width: 15, Align: pdf.AlignRight}}, rows)
 	n.thresholds(groups)
 	n.conclusion()
 }
@@ -447,9 +451,9 @@ func (n *note) effects(at string) {
 		}
 		rows = append(rows, row)
 	}
-	n.table([]pdf.Column{{Head: "", Width: 6, Align: pdf.AlignRight}, {Head: "Input shifted", Width: 70}, {Head: "Shift", Width: 24},
-		{Head: "Up / " + n.diffUnit(), Width: 17, Align: pdf.AlignDecimal}, {Head: "Down / " + n.diffUnit(), Width: 17, Align: pdf.AlignDecimal},
-		{Head: fmt.Sprintf("− %[1]s … 0 … + %[1]s", n.diff(largest)), Width: barWidth + 2, Align: pdf.AlignCentre}}, rows)
+	n.table([]pdf.Column{{Head: "", Width: 6, Align: pdf.AlignRight}, {Head: "Input shifted", Width: 68}, {Head: "Shift", Width: 24},
+		{Head: "Up / " + n.diffUnit(), Width: 17, Align: pdf.AlignDecimal}, {Head: "Down / " + n.diffUnit(), Width: 19, Align: pdf.AlignDecimal},
+		{Head: fmt.Sprintf("− %[1]s … 0 … + %[1]s", n.bare(unit.TemperatureDifference, largest, 1)), Width: barWidth + 2, Align: pdf.AlignCentre}}, rows)
 	for _, t := range n.load().Temps {
 		if t.At == at {
 			n.textf("Together: U = + %s / − %s on %s.", n.diff(t.PlusK), n.diff(t.MinusK), n.temp(t.K))
