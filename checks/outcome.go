@@ -76,6 +76,7 @@ type LoadOutcome struct {
 	Temps      []Temp     `json:"temperatures"`
 	Heat       []HeatPath `json:"heat"`
 	Films      []FilmRow  `json:"films"`
+	Layers     []LayerRow `json:"layers"`
 	Verdicts   []Judged   `json:"verdicts"`
 
 	Record     []Iteration      `json:"-"` // iteration record
@@ -107,6 +108,19 @@ type HeatPath struct {
 	W     float64 `json:"W"`
 	Share float64 `json:"share"` // of the total heat shed, 0..1; final paths only
 	Final bool    `json:"final"` // reaches air or surroundings
+}
+
+// LayerRow is the conduction through one layer of one face.
+type LayerRow struct {
+	At         string  `json:"at"`
+	Material   string  `json:"material"`
+	ThicknessM float64 `json:"thickness_m"`
+	FactorM    float64 `json:"shape_factor_m"` // Q = k S (T1 - T2)
+	K          float64 `json:"k_mean_W_mK"`    // mean conductivity between both sides
+	InnerK     float64 `json:"inner_K"`
+	OuterK     float64 `json:"outer_K"`
+	W          float64 `json:"W"`
+	InRange    bool    `json:"in_range"` // of the conductivity table
 }
 
 // FilmRow is one film as the contract shows it.

@@ -73,6 +73,25 @@ func (m *model) owners() map[int]string {
 	return own
 }
 
+// layers lists the conduction through every layer, face by face from the
+// inside out.
+func (m *model) layers(s balance.Solution) []LayerRow {
+	rows := []LayerRow{}
+	for _, f := range m.faces {
+		link := f.convect - len(f.part.Slabs) // a face's layers stand right before its outside film
+		for i, slab := range f.part.Slabs {
+			k, l := f.solids[i], m.b.Links[link+i]
+			t1, t2 := s.T[l.From], s.T[l.To]
+			rows = append(rows, LayerRow{
+				At: f.part.Face.Name, Material: k.name, ThicknessM: slab.Thickness, FactorM: slab.Factor(),
+				K: k.mean(t1, t2) * factor(m.t.conductivity, k.index), InnerK: t1, OuterK: t2, W: s.Heat[link+i],
+				InRange: k.mat == nil || k.mat.InRange(t1, t2),
+			})
+		}
+	}
+	return rows
+}
+
 // heatShed is the heat in W that leaves the core: what goes to the air and the
 // surroundings less what the sun brings.
 func (m *model) heatShed(s balance.Solution) float64 {

@@ -46,13 +46,13 @@ func runLoad(c casefile.Case) LoadOutcome {
 	l := LoadOutcome{
 		Name: c.Load.Name, Purpose: c.Load.Purpose, Case: c, Changed: c.Load.Changed, PressurePa: m.pressure,
 		Status: Status(s.Status), Message: s.Message, Iterations: len(s.Steps), ClosureW: s.Closure, Record: record(s),
-		Temps: []Temp{}, Heat: []HeatPath{}, Films: []FilmRow{}, Verdicts: []Judged{},
+		Temps: []Temp{}, Heat: []HeatPath{}, Films: []FilmRow{}, Layers: []LayerRow{}, Verdicts: []Judged{},
 	}
 	if s.Status != balance.Converged {
 		l.Message = fmt.Sprintf("load case %q: %s", c.Load.Name, s.Message)
 		return l
 	}
-	l.Temps, l.Heat, l.Films, l.HeatW = m.temps(s), m.heatPaths(s), m.films(s), m.heatShed(s)
+	l.Temps, l.Heat, l.Films, l.Layers, l.HeatW = m.temps(s), m.heatPaths(s), m.films(s), m.layers(s), m.heatShed(s)
 	l.CrossCheck = crossCheck(m, s)
 	l.Notes = append(l.Notes, m.remarks(l)...)
 	if out := propertiesLeft(l.Films); out != "" {
@@ -114,6 +114,11 @@ func (m *model) remarks(l LoadOutcome) []string {
 	for _, f := range l.Films {
 		if !f.InRange {
 			list = append(list, fmt.Sprintf("film %s on %s: %s", f.Side, f.At, f.Range))
+		}
+	}
+	for _, y := range l.Layers {
+		if !y.InRange {
+			list = append(list, fmt.Sprintf("%s, %s: between %.0f K and %.0f K its conductivity table ends; the nearest published value is used", y.At, y.Material, y.InnerK, y.OuterK))
 		}
 	}
 	if !l.CrossCheck.Agrees {

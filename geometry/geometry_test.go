@@ -93,3 +93,21 @@ func TestDishArea(t *testing.T) {
 	}
 	near(t, "surface of revolution", DishArea(1), sum*math.Pi/2/n/3, 1e-8)
 }
+
+// Two-layer lagged pipe: r 44, 94, 124 mm; k 0.087 and 0.064 W/(m·K); 623 K to
+// 313 K; 149.2 W/m. Gavhane, Heat Transfer, Example 2.3 (open transcription of
+// the book's worked example).
+func TestTwoLayerPipePublished(t *testing.T) {
+	layers := Cylinder(0.088, 1, true, false, Stack{Layers: []float64{0.050, 0.030}})[0].Slabs
+	r := 1/(0.087*layers[0].Factor()) + 1/(0.064*layers[1].Factor())
+	near(t, "heat per metre", (623.0-313)/r, 149.2, 0.002)
+}
+
+// Steam pipe with 30 mm of insulation between given films: inner film 60, outer
+// film 18 W/(m²·K), wall k 80, insulation k 0.05 W/(m·K), 320 °C to 5 °C:
+// 120.8 W/m. Cengel, Example 3-8 (open transcription of the worked example).
+func TestInsulatedSteamPipePublished(t *testing.T) {
+	p := Cylinder(0.055, 1, true, false, Stack{Wall: 0.0025, Layers: []float64{0.03}})[0]
+	r := 1/(60*math.Pi*0.05) + 1/(80*p.Slabs[0].Factor()) + 1/(0.05*p.Slabs[1].Factor()) + 1/(18*p.Face.Area)
+	near(t, "heat per metre", (320.0-5)/r, 120.8, 0.001)
+}
