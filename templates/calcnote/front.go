@@ -229,7 +229,8 @@ func (n *note) verdictPanel() {
 // burnCaution points to the section with the cautions.
 func (n *note) burnCaution() []pdf.Run {
 	key, number := n.sectionOf(cautionsTitle)
-	return []pdf.Run{{Text: limit.CautionHead + " Local hot spots are hotter than the mean of a face. See "},
+	return []pdf.Run{{Text: "Burn thresholds hold for short contact of a small area of healthy skin; pain and a startled movement begin lower. Local hot spots are hotter than the mean of a face. " +
+		limit.CautionHead + " See "},
 		{Text: "section\u00A0" + number, Link: key}, {Text: "."}}
 }
 
