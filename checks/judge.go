@@ -139,7 +139,7 @@ func (k criterion) judge(t Temp, effects []Effect) Judged {
 	}
 }
 
-var severity = map[Verdict]int{None: 0, Pass: 1, ConditionalPass: 2, ConditionalFail: 3, Fail: 4, NoResult: 5}
+var severity = map[Verdict]int{None: 0, NotJudged: 0, Pass: 1, ConditionalPass: 2, ConditionalFail: 3, Fail: 4, NoResult: 5}
 
 // worse returns the graver of two verdicts.
 func worse(a, b Verdict) Verdict {

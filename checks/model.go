@@ -269,9 +269,16 @@ func (m *model) filmState(ts, ta, dt float64) freeconv.State {
 func (m *model) films(s balance.Solution) []FilmRow {
 	var rows []FilmRow
 	for _, f := range m.faces {
-		rows = append(rows, m.filmRow(f.part.Face, outside, s, f.outer, m.air, f.convect))
+		out := m.filmRow(f.part.Face, outside, s, f.outer, m.air, f.convect)
+		out.Emissivity, out.RadiantK = m.c.Body.Emissivity.Typical, s.T[f.seen]
+		if sun, ok := m.c.Surroundings.Sun[out.At]; ok {
+			out.SunWm2, out.Absorptance, out.SunW = sun.SI, m.c.Body.Absorb.Typical, f.sun
+		}
+		rows = append(rows, out)
 		if f.inFilm >= 0 {
-			rows = append(rows, m.filmRow(f.part.Inside, inside, s, f.inner, m.core, f.inFilm))
+			in := m.filmRow(f.part.Inside, inside, s, f.inner, m.core, f.inFilm)
+			in.Emissivity, in.RadiantK = m.c.Inside.Emissivity.SI, s.T[m.core]
+			rows = append(rows, in)
 		}
 	}
 	return rows
@@ -283,7 +290,7 @@ func (m *model) filmRow(g geometry.Face, side string, s balance.Solution, surfac
 	return FilmRow{
 		At: g.Name, Side: side, Method: v.Method.Name, MethodID: v.Method.ID, Source: v.Method.Citation, Why: v.Why,
 		LengthM: v.Length, Length: v.LengthText, FilmK: v.TProps, Gr: v.Gr, Ra: v.Ra, Pr: v.Props.Pr, Nu: v.Nu,
-		H: v.H * tuned, AreaM2: g.Area, W: s.Heat[link], Regime: v.Regime, InRange: v.InRange, Range: v.RangeNote,
+		H: v.H * tuned, AreaM2: g.Area, W: s.Heat[link], RadiationW: s.Heat[link+1], Regime: v.Regime, InRange: v.InRange, Range: v.RangeNote,
 		Notes: v.Notes, Film: v,
 	}
 }

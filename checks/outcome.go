@@ -6,6 +6,7 @@ package checks
 
 import (
 	"stillair/checks/casefile"
+	"stillair/checks/material"
 	"stillair/freeconv"
 )
 
@@ -61,6 +62,7 @@ const (
 	Fail            Verdict = "fail"
 	None            Verdict = "no limit given"
 	NoResult        Verdict = "no result"
+	NotJudged       Verdict = "not judged" // limits are given, but none for the purpose of this load case
 )
 
 // LoadOutcome is the result of one load case.
@@ -78,6 +80,7 @@ type LoadOutcome struct {
 	Films      []FilmRow  `json:"films"`
 	Layers     []LayerRow `json:"layers"`
 	Verdicts   []Judged   `json:"verdicts"`
+	Verdict    Verdict    `json:"verdict"` // the gravest of Verdicts
 
 	Record     []Iteration      `json:"-"` // iteration record
 	CrossCheck CrossCheck       `json:"cross_check"`
@@ -120,7 +123,13 @@ type LayerRow struct {
 	InnerK     float64 `json:"inner_K"`
 	OuterK     float64 `json:"outer_K"`
 	W          float64 `json:"W"`
-	InRange    bool    `json:"in_range"` // of the conductivity table
+	InRange    bool    `json:"in_range"`                 // of the conductivity table
+	AreaM2     float64 `json:"area_m2,omitempty"`        // plane layers: mean of both sides
+	LengthM    float64 `json:"length_m,omitempty"`       // cylinders
+	InnerM     float64 `json:"inner_radius_m,omitempty"` // cylinders and spheres
+	OuterM     float64 `json:"outer_radius_m,omitempty"`
+
+	Solid *material.Material `json:"-"` // nil when the conductivity was typed
 }
 
 // FilmRow is one film as the contract shows it.
@@ -145,6 +154,14 @@ type FilmRow struct {
 	InRange  bool     `json:"in_range"`
 	Range    string   `json:"range_note,omitempty"`
 	Notes    []string `json:"notes,omitempty"`
+
+	// Of outside films: the other heats of the same face.
+	Emissivity  float64 `json:"emissivity"` // inside: the effective one between equipment and wall
+	RadiantK    float64 `json:"radiant_K"`  // inside: the inside air
+	RadiationW  float64 `json:"radiation_W"`
+	SunWm2      float64 `json:"sun_W_m2,omitempty"`
+	Absorptance float64 `json:"absorptance,omitempty"`
+	SunW        float64 `json:"sun_W,omitempty"`
 
 	Film freeconv.Film `json:"-"`
 }
@@ -196,9 +213,13 @@ type Effect struct {
 
 // SecondMethod is the same balance with another published set of correlations.
 type SecondMethod struct {
-	Methods []string    `json:"methods"`
-	Rows    []SecondRow `json:"rows"`
-	Status  Status      `json:"status"`
+	// Verdicts are the checks of this load case judged with the temperatures of
+	// the second method and the uncertainty of the first.
+	Verdicts []SecondVerdict `json:"verdicts"`
+	Films    []FilmRow       `json:"films"`
+	Methods  []string        `json:"methods"`
+	Rows     []SecondRow     `json:"rows"`
+	Status   Status          `json:"status"`
 }
 
 // SecondRow compares one temperature.
@@ -207,4 +228,26 @@ type SecondRow struct {
 	FirstK float64 `json:"first_K"`
 	K      float64 `json:"K"`
 	DiffK  float64 `json:"difference_K"`
+}
+
+// SecondVerdict is one check under both methods.
+type SecondVerdict struct {
+	At     string  `json:"at"`
+	Limit  string  `json:"limit"`
+	First  Verdict `json:"first"`
+	Second Verdict `json:"second"`
+}
+
+// Changed lists the checks whose verdict word the second method changes.
+func (s *SecondMethod) Changed() []SecondVerdict {
+	if s == nil {
+		return nil
+	}
+	var list []SecondVerdict
+	for _, v := range s.Verdicts {
+		if v.First != v.Second {
+			list = append(list, v)
+		}
+	}
+	return list
 }

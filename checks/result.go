@@ -85,7 +85,8 @@ func (m *model) layers(s balance.Solution) []LayerRow {
 			rows = append(rows, LayerRow{
 				At: f.part.Face.Name, Material: k.name, ThicknessM: slab.Thickness, FactorM: slab.Factor(),
 				K: k.mean(t1, t2) * factor(m.t.conductivity, k.index), InnerK: t1, OuterK: t2, W: s.Heat[link+i],
-				InRange: k.mat == nil || k.mat.InRange(t1, t2),
+				InRange: k.mat == nil || k.mat.InRange(t1, t2), Solid: k.mat,
+				AreaM2: slab.Area, LengthM: slab.Length, InnerM: slab.Inner, OuterM: slab.Outer,
 			})
 		}
 	}

@@ -46,7 +46,7 @@ func runLoad(c casefile.Case) LoadOutcome {
 	l := LoadOutcome{
 		Name: c.Load.Name, Purpose: c.Load.Purpose, Case: c, Changed: c.Load.Changed, PressurePa: m.pressure,
 		Status: Status(s.Status), Message: s.Message, Iterations: len(s.Steps), ClosureW: s.Closure, Record: record(s),
-		Temps: []Temp{}, Heat: []HeatPath{}, Films: []FilmRow{}, Layers: []LayerRow{}, Verdicts: []Judged{},
+		Verdict: NoResult, Temps: []Temp{}, Heat: []HeatPath{}, Films: []FilmRow{}, Layers: []LayerRow{}, Verdicts: []Judged{},
 	}
 	if s.Status != balance.Converged {
 		l.Message = fmt.Sprintf("load case %q: %s", c.Load.Name, s.Message)
@@ -66,8 +66,24 @@ func runLoad(c casefile.Case) LoadOutcome {
 		l.DewPointK = limit.DewPoint(c.Surroundings.Air.SI, c.Surroundings.Humidity.SI)
 	}
 	l.Verdicts = append(l.Verdicts, judge(c, l.Temps, l.Effects, l.DewPointK)...)
+	l.Verdict = l.worst()
 	l.Second = secondMethod(m, l)
+	for _, v := range l.Second.Changed() {
+		l.Notes = append(l.Notes, fmt.Sprintf("second method: %s, %s would be %q instead of %q", v.At, v.Limit, v.Second, v.First))
+	}
 	return l
+}
+
+// worst is the gravest verdict of a load case.
+func (l LoadOutcome) worst() Verdict {
+	v := None
+	if len(l.Case.Limits) > 0 {
+		v = NotJudged
+	}
+	for _, row := range l.Verdicts {
+		v = worse(v, row.Verdict)
+	}
+	return v
 }
 
 func choiceOf(c casefile.Case) freeconv.Choice {
@@ -118,7 +134,7 @@ func (m *model) remarks(l LoadOutcome) []string {
 	}
 	for _, y := range l.Layers {
 		if !y.InRange {
-			list = append(list, fmt.Sprintf("%s, %s: between %.0f K and %.0f K its conductivity table ends; the nearest published value is used", y.At, y.Material, y.InnerK, y.OuterK))
+			list = append(list, outsideTable(y))
 		}
 	}
 	if !l.CrossCheck.Agrees {
@@ -130,6 +146,17 @@ func (m *model) remarks(l LoadOutcome) []string {
 	return list
 }
 
+// outsideTable tells where the conductivity of a layer was published and where
+// it was used.
+func outsideTable(y LayerRow) string {
+	p := y.Solid.Points
+	return fmt.Sprintf("%s: the conductivity of %s is published for %.0f °C to %.0f °C and used from %.0f °C to %.0f °C; beyond its hot end a rising table is carried on with its last slope",
+		y.At, y.Material, p[0].T-zeroCelsius, p[len(p)-1].T-zeroCelsius, y.OuterK-zeroCelsius, y.InnerK-zeroCelsius)
+}
+
+// zeroCelsius is 0 °C in kelvin.
+const zeroCelsius = 273.15
+
 // secondMethod solves the same balance with another published correlation for
 // every kind of face.
 func secondMethod(m *model, l LoadOutcome) *SecondMethod {
@@ -140,13 +167,18 @@ func secondMethod(m *model, l LoadOutcome) *SecondMethod {
 		return second
 	}
 	seen := map[string]bool{}
-	for _, f := range n.films(s) {
+	second.Films = n.films(s)
+	for _, f := range second.Films {
 		if !seen[f.Method] {
 			seen[f.Method] = true
 			second.Methods = append(second.Methods, f.Method)
 		}
 	}
-	for i, t := range n.temps(s) {
+	temps := n.temps(s)
+	for i, v := range judge(m.c, temps, l.Effects, l.DewPointK) {
+		second.Verdicts = append(second.Verdicts, SecondVerdict{At: v.At, Limit: v.Limit, First: l.Verdicts[i].Verdict, Second: v.Verdict})
+	}
+	for i, t := range temps {
 		second.Rows = append(second.Rows, SecondRow{At: t.At, FirstK: l.Temps[i].K, K: t.K, DiffK: t.K - l.Temps[i].K})
 	}
 	return second

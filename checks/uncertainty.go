@@ -46,6 +46,8 @@ func inputShifts(c casefile.Case) []shift {
 	if c.Body.Kind == "box" {
 		list = append(list, absolute("effective emissivity inside", u.Inside, func(c *casefile.Case, d float64) {
 			c.Inside.Emissivity.SI = clip(c.Inside.Emissivity.SI+d, 0, 1)
+		}), absolute("upper zone factor", u.UpperZone, func(c *casefile.Case, d float64) {
+			c.Inside.UpperZone.SI = math.Max(c.Inside.UpperZone.SI+d, 1)
 		}))
 	}
 	return list

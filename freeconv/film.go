@@ -73,15 +73,15 @@ func conductionLimit(r *result) float64 {
 }
 
 // Published ends of the laminar and starts of the turbulent regime. Vertical
-// plate: Ra = 1e9 (Incropera) to 1e10 (Cengel). Plate, unstable side: 8e6
-// (Lloyd & Moran 1974) to 1e7 (McAdams 1954). Horizontal cylinder: 1e9, the
+// plate: Ra = 1e9 (Incropera) to 1e10 (Cengel). Plate, unstable side: from
+// 3.6^12 = 4.74e6, where 0.15 Ra^(1/3) overtakes 0.54 Ra^(1/4), to 1e7 (McAdams 1954). Horizontal cylinder: 1e9, the
 // end of the laminar form of Churchill & Chu 1975.
 func regimeBounds(k Kind) (laminarTo, turbulentFrom float64) {
 	switch k {
 	case VerticalPlate, VerticalCylinder, InclinedDown:
 		return 1e9, 1e10
 	case PlateUp, InclinedUp:
-		return 8e6, 1e7
+		return 4.74e6, 1e7
 	case HorizontalCylinder:
 		return 1e9, 1e9
 	}
@@ -157,8 +157,8 @@ func notes(o *outcome, f *geometry.Face) []string {
 	if r.kind == VerticalCylinder {
 		list = append(list, slenderNote(r, f))
 	}
-	if r.c == &largestUp && lowBranchUp(r.in.Ra) {
-		list = append(list, "the branch 0.96 Ra^(1/6) governs, which is from memory, not seen in print")
+	if r.c == &largestUp {
+		list = append(list, governingBranchUp(r.in.Ra))
 	}
 	if r.c.Flux {
 		list = append(list, "form for uniform heat flux: the temperature difference is that of the mean wall temperature")

@@ -417,7 +417,7 @@ func (b *builder) uncertainty() {
 		return b.quantity(uncertainty.part(key), b.root.get("uncertainty").get(key), "uncertainty."+key)
 	}
 	b.c.Uncertainty = Uncertainty{Heat: read("heat"), Air: read("air"), Contents: read("contents"), Sun: read("sun"), Correlation: read("correlation"),
-		Emissivity: read("emissivity"), Inside: read("inside"), Conductivity: read("conductivity"), Thickness: read("thickness")}
+		Emissivity: read("emissivity"), Inside: read("inside"), UpperZone: read("upper zone"), Conductivity: read("conductivity"), Thickness: read("thickness")}
 }
 
 // Half-widths around typed surface properties, stated assumptions.

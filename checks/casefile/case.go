@@ -137,6 +137,7 @@ type Uncertainty struct {
 	Correlation  Quantity // fraction of h where no scatter is published
 	Emissivity   Quantity // absolute; Set only when typed, otherwise the finish range is used
 	Inside       Quantity // absolute, of Inside.Emissivity
+	UpperZone    Quantity // absolute, of Inside.UpperZone
 	Conductivity Quantity // fraction
 	Thickness    Quantity // fraction
 }

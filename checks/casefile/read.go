@@ -106,6 +106,7 @@ func needed(inputs []Input, cases []Case) []Input {
 		"contents":     func(c Case) bool { return c.Contents.Set },
 		"sun":          func(c Case) bool { return len(c.Surroundings.Sun) > 0 },
 		"inside":       func(c Case) bool { return c.Body.Kind == "box" },
+		"upper zone":   func(c Case) bool { return c.Body.Kind == "box" },
 		"conductivity": func(c Case) bool { return c.Body.Wall != nil || len(c.Body.Layers) > 0 },
 		"thickness":    func(c Case) bool { return c.Body.Wall != nil || len(c.Body.Layers) > 0 },
 	} {

@@ -161,7 +161,7 @@ func coatingCurve() []knot {
 // addCoating raises the threshold of the bare metal to that of coated metal.
 func (t *Threshold) addCoating(low, high, contact float64) (float64, float64) {
 	moreLow, moreHigh := t.interpolate("increment of 50 µm lacquer", coatingCurve(), contact)
-	t.step("Coated metal: %.1f%s°C + %.1f%sK = %.1f%s°C.", low, space, moreLow, space, low+moreLow, space)
+	t.step("Coated metal is taken as bare metal under 50 µm of lacquer, the one coating with published values at more than one contact time: %.1f%s°C + %.1f%sK = %.1f%s°C.", low, space, moreLow, space, low+moreLow, space)
 	return low + moreLow, high + moreHigh
 }
 
@@ -179,7 +179,11 @@ func (t *Threshold) interpolate(what string, curve []knot, contact float64) (low
 	b := curve[i]
 	if b.time == contact {
 		t.use(b)
-		t.step("%s, published for contact of %s: %s.", what, seconds(b.time), b.value())
+		word := "published"
+		if b.row == fromMemory {
+			word = "from memory"
+		}
+		t.step("%s, %s for contact of %s: %s.", what, word, seconds(b.time), b.value())
 		return b.low, b.high
 	}
 	a := curve[i-1]

@@ -74,7 +74,10 @@ func Find(name string) (Material, bool) {
 func DataVersion() string { return catalogue.Version(materialTable) }
 
 // At is the conductivity in W/(m·K) at T: linear between the points, the value
-// of the nearest end outside them. A material without points has 0.
+// of the coldest point below them. Above them a rising table is carried on with
+// its last slope, because holding its last value would make insulation better
+// than it is; a falling one is held. InRange tells. A material without points
+// has 0.
 func (m Material) At(T float64) float64 {
 	p := m.Points
 	if len(p) == 0 {
@@ -89,7 +92,20 @@ func (m Material) At(T float64) float64 {
 			return p[i-1].K + share*(p[i].K-p[i-1].K)
 		}
 	}
-	return p[len(p)-1].K
+	return p[len(p)-1].K + max(m.lastSlope(), 0)*max(min(T, hottest)-p[len(p)-1].T, 0)
+}
+
+// hottest is where a table stops being carried on, K: no layer is that hot.
+const hottest = 2500.0
+
+// lastSlope is dk/dT between the two hottest points, W/(m·K²); 0 for one point.
+func (m Material) lastSlope() float64 {
+	p := m.Points
+	if len(p) < 2 {
+		return 0
+	}
+	a, b := p[len(p)-2], p[len(p)-1]
+	return (b.K - a.K) / (b.T - a.T)
 }
 
 // Mean is the mean conductivity in W/(m·K) between T1 and T2, in either order,
