@@ -143,3 +143,26 @@ func number2(v float64) string {
 	b, _ := json.Marshal(math.Round(100*v) / 100)
 	return string(b)
 }
+
+// A limit that the purposes of the load cases leave aside is named, so that
+// nobody takes it for met.
+func TestLimitsNobodyJudgedAreNamed(t *testing.T) {
+	o := run(t, `title: plate
+surroundings: {air: 20 °C}
+body:
+  plate: {width: 300 mm, height: 300 mm, emissivity: 0.9}
+heat: 50 W
+limits:
+  - {at: any face, touch: bare metal, contact: 5 s}
+  - {at: front, most: 90 °C, why: coating}
+loads:
+  - {name: long run, for: component}
+  - {name: heat demand, for: loss, air: 5 °C}
+`)
+	if len(o.Unjudged) != 1 || !strings.Contains(o.Unjudged[0], "bare metal") {
+		t.Errorf("unjudged limits: %q", o.Unjudged)
+	}
+	if o.Loads[1].Verdict != NotJudged || o.Verdict != Pass {
+		t.Errorf("loss case %q, whole %q", o.Loads[1].Verdict, o.Verdict)
+	}
+}

@@ -3,6 +3,7 @@ package checks
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"stillair/checks/casefile"
@@ -33,6 +34,24 @@ func judge(c casefile.Case, temps []Temp, effects []Effect, dew float64) []Judge
 		}
 	}
 	return rows
+}
+
+// unjudged names the limits that no load case with a result has judged.
+func unjudged(o *Outcome) []string {
+	var list []string
+	for i, l := range o.Loads[0].Case.Limits {
+		if !slices.ContainsFunc(o.Loads, func(x LoadOutcome) bool { return x.judged(i) }) {
+			k := makeCriterion(l, o.Loads[0].Case, 0)
+			list = append(list, fmt.Sprintf("%s: %s", l.At, k.text))
+		}
+	}
+	return list
+}
+
+// judged tells whether limit i of the case was applied in this load case.
+func (x LoadOutcome) judged(i int) bool {
+	l := x.Case.Limits[i]
+	return applies(l, x.Case) && slices.ContainsFunc(x.Temps, func(t Temp) bool { return meant(l.At, t) })
 }
 
 // meant tells whether a limit at the place named is about this temperature.
@@ -139,7 +158,7 @@ func (k criterion) judge(t Temp, effects []Effect) Judged {
 	}
 }
 
-var severity = map[Verdict]int{None: 0, NotJudged: 0, Pass: 1, ConditionalPass: 2, ConditionalFail: 3, Fail: 4, NoResult: 5}
+var severity = map[Verdict]int{None: 0, NotJudged: 1, Pass: 2, ConditionalPass: 3, ConditionalFail: 4, Fail: 5, NoResult: 6}
 
 // worse returns the graver of two verdicts.
 func worse(a, b Verdict) Verdict {
@@ -154,30 +173,18 @@ func worse(a, b Verdict) Verdict {
 func govern(o *Outcome) {
 	markTemps(o)
 	best := map[string]*Judged{}
-	var order []string
-	loadOf := map[*Judged]int{}
 	for i := range o.Loads {
 		for j := range o.Loads[i].Verdicts {
 			v := &o.Loads[i].Verdicts[j]
-			loadOf[v] = i
-			key := limitKey(*v)
-			if best[key] == nil {
-				order = append(order, key)
-			}
-			if best[key] == nil || v.MarginK < best[key].MarginK {
+			if key := limitKey(*v); best[key] == nil || v.MarginK < best[key].MarginK {
 				best[key] = v
 			}
 		}
 	}
-	var decisive *Judged
-	for _, key := range order {
-		v := best[key]
+	for _, v := range best {
 		v.Governing = true
-		if decisive == nil || graver(*v, *decisive) {
-			decisive = v
-		}
 	}
-	o.choose(decisive, loadOf)
+	o.choose()
 }
 
 // limitKey names a limit apart from the place and load case it is applied to.
@@ -189,6 +196,8 @@ func limitKey(v Judged) string {
 	return text + "|" + v.Source
 }
 
+// graver tells whether a decides before b: the worse verdict, then the smaller
+// margin.
 func graver(a, b Judged) bool {
 	if severity[a.Verdict] != severity[b.Verdict] {
 		return severity[a.Verdict] > severity[b.Verdict]
@@ -216,29 +225,47 @@ func markTemps(o *Outcome) {
 
 // choose sets the verdict of the whole and the load case that decides it: the
 // one of the decisive limit; without limits the one with the hottest core.
-func (o *Outcome) choose(decisive *Judged, loadOf map[*Judged]int) {
+func (o *Outcome) choose() {
 	o.Verdict = None
-	at, hottest := -1, math.Inf(-1)
-	for i, l := range o.Loads {
-		if l.Status != Converged {
-			o.Verdict = NoResult
-		}
-		for _, v := range l.Verdicts {
-			o.Verdict = worse(o.Verdict, v.Verdict)
-		}
-		if len(l.Temps) > 0 && l.Status == Converged && l.Temps[0].K > hottest {
-			at, hottest = i, l.Temps[0].K
+	governs, hottest := &o.Loads[0], math.Inf(-1)
+	for i := range o.Loads {
+		l := &o.Loads[i]
+		o.Verdict = worse(o.Verdict, l.Verdict)
+		if l.Status == Converged && l.Temps[0].K > hottest {
+			governs, hottest = l, l.Temps[0].K
 		}
 	}
-	if decisive != nil {
-		at = loadOf[decisive]
+	if _, l := o.Deciding(); l != nil {
+		governs = l
 	}
-	if at < 0 {
-		at = 0
-	}
-	o.Loads[at].Governing = true
-	o.Governs = o.Loads[at].Name
+	governs.Governing = true
+	o.Governs = governs.Name
 }
 
 // dewPointSource cites the formula behind limit.DewPoint.
 const dewPointSource = "dew point by the Magnus formula of Alduchov & Eskridge 1996, J. Appl. Meteor. 35:601-609 (coefficients from memory)"
+
+// Deciding is the check that decides a load case: the worst verdict, then the
+// smallest margin; nil when nothing was judged.
+func (l *LoadOutcome) Deciding() *Judged {
+	var best *Judged
+	for i := range l.Verdicts {
+		if v := &l.Verdicts[i]; best == nil || graver(*v, *best) {
+			best = v
+		}
+	}
+	return best
+}
+
+// Deciding is the check that decides the whole, and its load case; nil when
+// nothing was judged.
+func (o *Outcome) Deciding() (*Judged, *LoadOutcome) {
+	var best *Judged
+	var at *LoadOutcome
+	for i := range o.Loads {
+		if v := o.Loads[i].Deciding(); v != nil && (best == nil || graver(*v, *best)) {
+			best, at = v, &o.Loads[i]
+		}
+	}
+	return best, at
+}

@@ -20,15 +20,18 @@ type Program struct {
 // Outcome is the whole result of a check. Its JSON form is the machine
 // contract: fields are only ever added.
 type Outcome struct {
-	Schema      string           `json:"schema"` // "stillair.check/1"
-	Case        CaseID           `json:"case"`
-	Program     Program          `json:"program"`
-	Loads       []LoadOutcome    `json:"loads"`
-	Verdict     Verdict          `json:"verdict"`
-	Governs     string           `json:"governing_load"`
-	Cautions    []string         `json:"cautions,omitempty"` // present whenever a touch limit was judged
-	Assumptions []string         `json:"assumptions"`        // what the model takes for granted
-	Assumed     []casefile.Input `json:"-"`                  // inputs nobody typed
+	Schema   string        `json:"schema"` // "stillair.check/1"
+	Case     CaseID        `json:"case"`
+	Program  Program       `json:"program"`
+	Loads    []LoadOutcome `json:"loads"`
+	Verdict  Verdict       `json:"verdict"`
+	Governs  string        `json:"governing_load"`
+	Cautions []string      `json:"cautions,omitempty"` // present whenever a touch limit was judged
+	// Unjudged lists limits of the case that no load case judged, because of
+	// their purposes or because the place is covered everywhere.
+	Unjudged    []string         `json:"unjudged_limits,omitempty"`
+	Assumptions []string         `json:"assumptions"` // what the model takes for granted
+	Assumed     []casefile.Input `json:"-"`           // inputs nobody typed
 	File        *casefile.File   `json:"-"`
 }
 

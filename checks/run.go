@@ -29,6 +29,7 @@ func Run(f *casefile.File, p Program) *Outcome {
 		o.Loads = append(o.Loads, runLoad(c))
 	}
 	govern(o)
+	o.Unjudged = unjudged(o)
 	for _, l := range o.Loads {
 		for _, v := range l.Verdicts {
 			if v.Touch && o.Cautions == nil {

@@ -78,7 +78,7 @@ func exitOf(o *checks.Outcome) int {
 		}
 	}
 	switch o.Verdict {
-	case checks.Pass, checks.ConditionalPass, checks.None:
+	case checks.Pass, checks.ConditionalPass, checks.None, checks.NotJudged:
 		return exitPass
 	case checks.Fail, checks.ConditionalFail:
 		return exitLimit
