@@ -6,6 +6,7 @@ import (
 	"strings"
 
 	"stillair/checks/casefile"
+	"stillair/checks/limit"
 )
 
 // assumptions lists what the model takes for granted, in the order a reviewer
@@ -14,13 +15,16 @@ func assumptions(cases []casefile.Case) []string {
 	c := cases[0]
 	list := []string{
 		"Steady state; still air without wind, draught or fan; every face isothermal at its mean temperature, local hot spots are higher.",
-		"Ideal-gas air, expansion coefficient 1/T; grey diffuse surfaces that see only their surroundings, large and at one radiant temperature.",
+		"Dry air by the published property equations named in the methods, expansion coefficient 1/T; grey diffuse surfaces that see only their surroundings, large and at one radiant temperature.",
 	}
 	list = append(list, bodyAssumptions(c)...)
 	if c.Body.Kind == "box" {
 		list = append(list, boxAssumptions(c)...)
 	} else if c.Contents.Set {
-		list = append(list, "The film between the contents and the wall is left out: the inside of the wall is at the temperature of the contents (hotter than in fact, on the side of caution for touch).")
+		list = append(list, "The film between the contents and the wall is left out: the inside of the wall is at the temperature of the contents; a hot face is then hotter than in fact, a cold one colder.")
+	}
+	if text := coatings(c.Limits); text != "" {
+		list = append(list, text)
 	}
 	if names := coveredFaces(cases); len(names) > 0 {
 		list = append(list, fmt.Sprintf("Covered faces shed no heat: %s.", strings.Join(names, ", ")))
@@ -67,4 +71,14 @@ func coveredFaces(cases []casefile.Case) []string {
 	}
 	slices.Sort(names)
 	return names
+}
+
+// coatings tells what a coated surface is taken for in a touch limit.
+func coatings(limits []casefile.Limit) string {
+	for _, l := range limits {
+		if t, err := limit.Touch(l.Touch, l.Contact.SI); err == nil && t.Material == "coated metal" {
+			return "Coated metal is taken as metal under 50 µm of lacquer; a thinner coating burns at a lower temperature, down to that of bare metal."
+		}
+	}
+	return ""
 }

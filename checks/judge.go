@@ -15,6 +15,7 @@ type criterion struct {
 	text, source, why, confidence string
 	k                             float64 // K
 	lower, touch, rise            bool
+	extra                         float64 // K, uncertainty of the limit itself
 	steps                         []string
 }
 
@@ -62,23 +63,40 @@ func meant(at string, t Temp) bool {
 	return at == t.At
 }
 
-// applies tells whether a limit is judged in a load case of this purpose. A
-// load case without a purpose serves touch and component limits, and
-// condensation when the humidity is given.
+// applies tells whether a limit is judged in a load case of this purpose:
+// touch judges touch limits and limits on faces, component everything but touch
+// limits, condensation lowest temperatures and the dew point, loss nothing.
+// Without a purpose everything is judged, the dew point where the humidity is
+// given.
 func applies(l casefile.Limit, c casefile.Case) bool {
-	p := c.Load.Purpose
-	switch {
-	case p == "loss":
+	if l.NoCondensation && !c.Surroundings.Humidity.Set {
 		return false
-	case l.NoCondensation:
-		return c.Surroundings.Humidity.Set && (p == "" || p == "condensation")
-	case l.Touch != "":
-		return p == "" || p == "touch"
-	case l.Least.Set:
-		return p == "" || p == "component" || p == "condensation"
 	}
-	return p != "condensation"
+	touch := isTouch(l)
+	switch c.Load.Purpose {
+	case "":
+		return true
+	case "touch":
+		return touch || !l.Least.Set && !l.NoCondensation && onFace(l.At)
+	case "component":
+		return !touch && !l.NoCondensation
+	case "condensation":
+		return l.NoCondensation || l.Least.Set
+	}
+	return false
 }
+
+// isTouch tells whether a limit is about a person touching a surface.
+func isTouch(l casefile.Limit) bool {
+	if l.Rule != "" {
+		e, _ := limit.Find(l.Rule)
+		return e.IsTouch()
+	}
+	return l.Touch != ""
+}
+
+// onFace tells whether a place is an outer surface.
+func onFace(at string) bool { return at != "inside air" && at != "upper zone" && at != "contents" }
 
 func makeCriterion(l casefile.Limit, c casefile.Case, dew float64) criterion {
 	switch {
@@ -105,7 +123,7 @@ func projectCriterion(l casefile.Limit, c casefile.Case) criterion {
 	default:
 		k.k, k.text, k.rise = c.Surroundings.Air.SI+l.Rise.SI, fmt.Sprintf("rise over the air of at most %s", l.Rise.Typed), true
 	}
-	k.touch = l.At != "inside air" && l.At != "upper zone" && l.At != "contents" && !k.lower
+	k.touch = onFace(l.At) && !k.lower
 	return k
 }
 
@@ -126,7 +144,7 @@ func ruleCriterion(l casefile.Limit, c casefile.Case) criterion {
 	k, _ := e.Kelvin(c.Surroundings.Air.SI)
 	return criterion{
 		text: e.Text(), source: fmt.Sprintf("%s; quoted from %s", e.Standard, e.Source),
-		why: l.Why, confidence: e.Confidence, k: k, rise: e.IsRise(), touch: true,
+		why: l.Why, confidence: e.Confidence, k: k, rise: e.IsRise(), touch: onFace(l.At),
 	}
 }
 
@@ -134,13 +152,21 @@ func dewCriterion(c casefile.Case, dew float64) criterion {
 	s := c.Surroundings
 	return criterion{
 		text:   fmt.Sprintf("no condensation: above the dew point of air at %s and %s relative humidity", s.Air.Typed, s.Humidity.Typed),
-		source: dewPointSource, k: dew, lower: true,
+		source: dewPointSource, k: dew, lower: true, rise: true, extra: dewUncertainty(s, c.Uncertainty.Humidity.SI),
 	}
+}
+
+// dewUncertainty is the shift of the dew point, K, by the uncertainty of the
+// humidity.
+func dewUncertainty(s casefile.Surroundings, u float64) float64 {
+	wet := math.Min(s.Humidity.SI+u, 1)
+	return limit.DewPoint(s.Air.SI, wet) - limit.DewPoint(s.Air.SI, s.Humidity.SI)
 }
 
 // judge compares one temperature by the four-way rule. The uncertainty is the
 // one on the side of the limit. A rise is not blamed for the uncertainty of
-// the air it is counted from.
+// the air it is counted from, nor is the distance to the dew point, which moves
+// with the air as the surface does.
 func (k criterion) judge(t Temp, effects []Effect) Judged {
 	skip := ""
 	if k.rise {
@@ -151,6 +177,7 @@ func (k criterion) judge(t Temp, effects []Effect) Judged {
 	if k.lower {
 		margin, u = t.K-k.k, minus
 	}
+	u = math.Hypot(u, k.extra)
 	word, p := limit.Judge(t.K, k.k, u, k.lower)
 	return Judged{
 		At: t.At, Limit: k.text, Source: k.source, Why: k.why, Confidence: k.confidence, LimitK: k.k, ValueK: t.K,

@@ -215,7 +215,15 @@ func (m *model) afterLayer(face string, i int, solids []solid) string {
 	if i+1 == len(solids) {
 		return face
 	}
-	return fmt.Sprintf("%s, between %s and %s", face, solids[i].name, solids[i+1].name)
+	return fmt.Sprintf("%s, between %s and %s", face, solids[i].place(), solids[i+1].place())
+}
+
+// place is the position of a layer in words.
+func (s solid) place() string {
+	if s.index == 0 {
+		return "wall"
+	}
+	return fmt.Sprintf("layer %d", s.index)
 }
 
 func (m *model) conduction(s geometry.Slab, k solid) balance.Law {

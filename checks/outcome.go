@@ -75,8 +75,11 @@ type LoadOutcome struct {
 	Status     Status     `json:"status"`
 	Message    string     `json:"message,omitempty"` // names the surface when the status is not converged
 	Iterations int        `json:"iterations"`
-	ClosureW   float64    `json:"closure_W"` // largest heat left over at any node, W
-	HeatW      float64    `json:"heat_W"`    // heat that leaves the body to air and surroundings, net of sun
+	ClosureW   float64    `json:"closure_W"`   // largest heat left over at any node, W
+	HeatW      float64    `json:"heat_W"`      // heat that leaves the body to air and surroundings, net of sun
+	HeatPlusW  float64    `json:"heat_plus_W"` // its uncertainty, about two standard deviations
+	HeatMinusW float64    `json:"heat_minus_W"`
+	HeatPerM   float64    `json:"heat_W_per_m,omitempty"` // of a pipe
 	Governing  bool       `json:"governing"`
 	Temps      []Temp     `json:"temperatures"`
 	Heat       []HeatPath `json:"heat"`
@@ -102,7 +105,7 @@ type Temp struct {
 	K         float64 `json:"K"`
 	MinusK    float64 `json:"minus_K"`
 	PlusK     float64 `json:"plus_K"`
-	Kind      string  `json:"kind"` // "air", "zone", "outer surface", "inner surface", "interface", "contents"
+	Kind      string  `json:"kind"` // "air", "zone", "outer surface", "inner surface", "interface", "contents", "body"
 	Governing bool    `json:"governing"`
 }
 
@@ -119,6 +122,7 @@ type HeatPath struct {
 // LayerRow is the conduction through one layer of one face.
 type LayerRow struct {
 	At         string  `json:"at"`
+	Place      string  `json:"place"` // "wall", "layer 1", ...
 	Material   string  `json:"material"`
 	ThicknessM float64 `json:"thickness_m"`
 	FactorM    float64 `json:"shape_factor_m"` // Q = k S (T1 - T2)

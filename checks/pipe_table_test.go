@@ -63,7 +63,11 @@ func TestBarePipeTable(t *testing.T) {
 // Other published heat emission tables, which do not state their emissivity or
 // air temperature; tolerances are the spread between such tables.
 func TestHeatEmissionTables(t *testing.T) {
-	for _, r := range table(t, "heat_emission_tables.csv") {
+	rows := table(t, "heat_emission_tables.csv")
+	if len(rows) != 12 {
+		t.Errorf("%d rows of heat emission tables", len(rows))
+	}
+	for _, r := range rows {
 		t.Run(r["id"]+" "+r["source"], func(t *testing.T) {
 			got := barePipe(t, number(t, r["od_m"]), number(t, r["surface_K"]), number(t, r["air_K"]), number(t, r["emissivity"]))
 			want := number(t, r["published_W_m"])

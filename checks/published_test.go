@@ -96,7 +96,11 @@ func quantity(t testing.TB, l LoadOutcome, what, at string) float64 {
 // Published examples run through the whole road with our own air: the case
 // file is read, the balance solved, the answer compared with the book.
 func TestPublishedExamplesEndToEnd(t *testing.T) {
-	for _, r := range table(t, "end_to_end.csv") {
+	rows := table(t, "end_to_end.csv")
+	if len(rows) < 27 {
+		t.Errorf("only %d published examples", len(rows))
+	}
+	for _, r := range rows {
 		t.Run(r["id"]+" "+r["source"], func(t *testing.T) {
 			text := fmt.Sprintf("title: %s\nsurroundings: %s\nbody:\n  %s\n%s\n", r["what"], r["surroundings"], r["body"], r["drive"])
 			if m := r["methods"]; m != "" {

@@ -83,7 +83,7 @@ func (m *model) layers(s balance.Solution) []LayerRow {
 			k, l := f.solids[i], m.b.Links[link+i]
 			t1, t2 := s.T[l.From], s.T[l.To]
 			rows = append(rows, LayerRow{
-				At: f.part.Face.Name, Material: k.name, ThicknessM: slab.Thickness, FactorM: slab.Factor(),
+				At: f.part.Face.Name, Place: k.place(), Material: k.name, ThicknessM: slab.Thickness, FactorM: slab.Factor(),
 				K: k.mean(t1, t2) * factor(m.t.conductivity, k.index), InnerK: t1, OuterK: t2, W: s.Heat[link+i],
 				InRange: k.mat == nil || k.mat.InRange(t1, t2), Solid: k.mat,
 				AreaM2: slab.Area, LengthM: slab.Length, InnerM: slab.Inner, OuterM: slab.Outer,

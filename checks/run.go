@@ -50,19 +50,21 @@ func runLoad(c casefile.Case) LoadOutcome {
 		Verdict: NoResult, Temps: []Temp{}, Heat: []HeatPath{}, Films: []FilmRow{}, Layers: []LayerRow{}, Verdicts: []Judged{},
 	}
 	if s.Status != balance.Converged {
-		l.Message = fmt.Sprintf("load case %q: %s", c.Load.Name, s.Message)
-		return l
+		return l.without(Status(s.Status), s.Message)
 	}
-	l.Temps, l.Heat, l.Films, l.Layers, l.HeatW = m.temps(s), m.heatPaths(s), m.films(s), m.layers(s), m.heatShed(s)
+	films := m.films(s)
+	if out := propertiesLeft(films); out != "" {
+		return l.without(OutOfProperties, out)
+	}
+	l.Temps, l.Heat, l.Films, l.Layers, l.HeatW = m.temps(s), m.heatPaths(s), films, m.layers(s), m.heatShed(s)
 	l.CrossCheck = crossCheck(m, s)
-	l.Notes = append(l.Notes, m.remarks(l)...)
-	if out := propertiesLeft(l.Films); out != "" {
-		l.Status, l.Message = OutOfProperties, fmt.Sprintf("load case %q: %s", c.Load.Name, out)
-		return l
+	if err := uncertain(m, &l); err != nil {
+		return l.without(NotConverged, err.Error())
 	}
-	var notes []string
-	l.Effects, notes = uncertain(m, l.Temps, l.Films)
-	l.Notes = append(l.Notes, notes...)
+	l.Notes = append(l.Notes, m.remarks(l)...)
+	if c.Body.Kind == "pipe" {
+		l.HeatPerM = l.HeatW / c.Body.Length.SI
+	}
 	if c.Surroundings.Humidity.Set {
 		l.DewPointK = limit.DewPoint(c.Surroundings.Air.SI, c.Surroundings.Humidity.SI)
 	}
@@ -72,6 +74,15 @@ func runLoad(c casefile.Case) LoadOutcome {
 	for _, v := range l.Second.Changed() {
 		l.Notes = append(l.Notes, fmt.Sprintf("second method: %s, %s would be %q instead of %q", v.At, v.Limit, v.Second, v.First))
 	}
+	return l
+}
+
+// without takes back what was found so far and gives the load case its status:
+// a last guess is never handed out as an answer.
+func (l LoadOutcome) without(status Status, why string) LoadOutcome {
+	l.Status, l.Message = status, fmt.Sprintf("load case %q: %s", l.Name, why)
+	l.Verdict, l.HeatW, l.Effects = NoResult, 0, nil
+	l.Temps, l.Heat, l.Films, l.Layers = []Temp{}, []HeatPath{}, []FilmRow{}, []LayerRow{}
 	return l
 }
 
@@ -141,8 +152,10 @@ func (m *model) remarks(l LoadOutcome) []string {
 	if !l.CrossCheck.Agrees {
 		list = append(list, fmt.Sprintf("plain damped substitution differs by %.2g K after %d iterations", l.CrossCheck.MaxDiffK, l.CrossCheck.Iterations))
 	}
-	if m.c.Body.Kind == "pipe" {
-		list = append(list, fmt.Sprintf("heat loss per metre of pipe: %.4g W/m", l.HeatW/m.c.Body.Length.SI))
+	if h := m.c.Surroundings.Humidity; h.Set && !limit.DewPointInRange(m.c.Surroundings.Air.SI, h.SI) {
+		list = append(list, "the dew point lies outside the range of its formula; below 0 °C surfaces frost at a slightly higher temperature")
+	} else if h.Set && limit.DewPoint(m.c.Surroundings.Air.SI, h.SI) < zeroCelsius {
+		list = append(list, "the dew point is below 0 °C: surfaces frost at a slightly higher temperature, about a tenth of the distance to 0 °C")
 	}
 	return list
 }
@@ -163,7 +176,7 @@ const zeroCelsius = 273.15
 func secondMethod(m *model, l LoadOutcome) *SecondMethod {
 	n := compile(m.c, otherChoice(l.Films), tuning{})
 	s := n.b.Solve()
-	second := &SecondMethod{Status: Status(s.Status)}
+	second := &SecondMethod{Status: Status(s.Status), Methods: []string{}, Rows: []SecondRow{}, Films: []FilmRow{}, Verdicts: []SecondVerdict{}}
 	if s.Status != balance.Converged {
 		return second
 	}

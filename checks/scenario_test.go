@@ -134,6 +134,22 @@ func TestScenarioPanelSensitivities(t *testing.T) {
 	}
 }
 
+// The starter case of the steam pipe, with the conductivity table of its wool
+// carried on beyond 150 °C: its mean is 1.6 % above the estimate's, and so is
+// the loss.
+func TestScenarioSteamPipeStarter(t *testing.T) {
+	l := loadNamed(t, run(t, starterCase(t, "steam-pipe.yaml")), "bright jacket")
+	if ts := celsius(temp(t, l, "side").K); math.Abs(ts-54.6) > scenarioK {
+		t.Errorf("jacket %.2f °C, independent estimate 54.6 °C", ts)
+	}
+	if math.Abs(l.HeatPerM/75.9-1) > 0.02 {
+		t.Errorf("loss %.2f W/m, independent estimate 75.9 W/m", l.HeatPerM)
+	}
+	if u := temp(t, l, "side").PlusK; math.Abs(u-5.7) > 1 {
+		t.Errorf("uncertainty %.2f K, independent estimate 5.7 K", u)
+	}
+}
+
 // Horizontal steam pipe, bare and lagged. The mean conductivity 0.04951
 // W/(m·K) is the one printed in the estimate's check line.
 func TestScenarioSteamPipe(t *testing.T) {

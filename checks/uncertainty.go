@@ -165,35 +165,44 @@ func scaled(m map[string]casefile.Quantity, f float64) map[string]casefile.Quant
 func clip(v, low, high float64) float64 { return math.Min(math.Max(v, low), high) }
 
 // uncertain shifts one input after the other, solves anew, and fills the
-// uncertainty of every temperature with the root of the sum of squares, the
-// shifts that warm it apart from those that cool it (law of propagation of
-// JCGM 100:2008, 5.1.2, uncorrelated, shifts of about two standard deviations).
-func uncertain(m *model, temps []Temp, films []FilmRow) ([]Effect, []string) {
-	var effects []Effect
-	var notes []string
-	for _, s := range shifts(m, films) {
-		up, okUp := shifted(m, s.up)
-		down, okDown := shifted(m, s.down)
-		if !okUp || !okDown {
-			notes = append(notes, fmt.Sprintf("the effect of %s (%s) could not be computed: the shifted balance has no solution", s.of, s.size))
-			continue
+// uncertainty of every temperature and of the heat with the root of the sum of
+// squares, the shifts that raise it apart from those that lower it (law of
+// propagation of JCGM 100:2008, 5.1.2, uncorrelated, shifts of about two
+// standard deviations). It fails when a shifted balance has no solution, since
+// an uncertainty that leaves an input out would be too small.
+func uncertain(m *model, l *LoadOutcome) error {
+	plus, minus := 0.0, 0.0
+	for _, s := range shifts(m, l.Films) {
+		up, heatUp, err := shifted(m, s.of, s.up)
+		if err != nil {
+			return err
 		}
-		for i, t := range temps {
-			effects = append(effects, Effect{At: t.At, Of: s.of, Shift: s.size, UpK: up[i].K - t.K, DownK: down[i].K - t.K, Source: s.source})
+		down, heatDown, err := shifted(m, s.of, s.down)
+		if err != nil {
+			return err
 		}
+		for i, t := range l.Temps {
+			l.Effects = append(l.Effects, Effect{At: t.At, Of: s.of, Shift: s.size, UpK: up[i].K - t.K, DownK: down[i].K - t.K, Source: s.source})
+		}
+		plus = math.Hypot(plus, math.Max(0, math.Max(heatUp, heatDown)-l.HeatW))
+		minus = math.Hypot(minus, math.Min(0, math.Min(heatUp, heatDown)-l.HeatW))
 	}
-	for i := range temps {
-		temps[i].PlusK, temps[i].MinusK = combine(effects, temps[i].At, "")
+	l.HeatPlusW, l.HeatMinusW = plus, minus
+	for i := range l.Temps {
+		l.Temps[i].PlusK, l.Temps[i].MinusK = combine(l.Effects, l.Temps[i].At, "")
 	}
-	return effects, notes
+	return nil
 }
 
-func shifted(m *model, apply func(*casefile.Case, *tuning)) ([]Temp, bool) {
+func shifted(m *model, of string, apply func(*casefile.Case, *tuning)) ([]Temp, float64, error) {
 	c, t := m.c, tuning{}
 	apply(&c, &t)
 	n := compile(c, m.choice, t)
 	s := n.b.Solve()
-	return n.temps(s), s.Status == balance.Converged
+	if s.Status != balance.Converged {
+		return nil, 0, fmt.Errorf("the uncertainty could not be computed: with %s shifted, %s", of, s.Message)
+	}
+	return n.temps(s), n.heatShed(s), nil
 }
 
 // combine is the root of the sum of squares of the effects on one temperature,

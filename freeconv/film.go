@@ -102,6 +102,11 @@ func regime(r *result) string {
 	return "laminar"
 }
 
+// prRounding is how far Pr may pass a published end before it counts: the ends
+// are rounded to a digit or two, and air, Pr 0.69 to 0.72, was among what was
+// measured.
+const prRounding = 0.03
+
 // rangeNote is empty when the source covers the case.
 func rangeNote(r *result) string {
 	c := r.c
@@ -115,7 +120,7 @@ func rangeNote(r *result) string {
 		}
 	}
 	add("Ra", r.in.Ra, c.RaMin, c.RaMax, "")
-	add("Pr", r.in.Pr, c.PrMin, c.PrMax, "")
+	add("Pr", r.in.Pr, c.PrMin*(1-prRounding), c.PrMax*(1+prRounding), "")
 	if c.ThetaMin != 0 || c.ThetaMax != 0 {
 		add("the tilt from the vertical", r.in.Theta, c.ThetaMin, c.ThetaMax, "°")
 	}

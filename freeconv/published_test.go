@@ -350,3 +350,20 @@ func TestCountPublishedValues(t *testing.T) {
 		t.Errorf("%d published values, at least 75 are wanted", total)
 	}
 }
+
+// The tables hold what was collected: an emptied or shortened table must not
+// pass for a verified one.
+func TestPublishedRowsAreAllThere(t *testing.T) {
+	total := 0
+	for name, want := range map[string]int{
+		"vertical_plate": 25, "horizontal_plate": 15, "inclined_plate": 4, "ducts_and_blocks": 7,
+		"horizontal_cylinder": 13, "vertical_cylinder": 7, "unknown_temperature": 9,
+	} {
+		n := len(readPublished(t, name))
+		if n < want {
+			t.Errorf("%s: %d published values, there were %d", name, n, want)
+		}
+		total += n
+	}
+	t.Logf("%d published values of free convection", total)
+}

@@ -33,11 +33,20 @@ func (b *Balance) SolveDamped() Solution {
 	if len(steps) > 0 {
 		last = steps[len(steps)-1]
 	}
-	return b.conclude(s, steps, last.Change <= settled*b.largest(s, unknown))
+	return b.conclude(s, steps, b.settledBy(last.Change, s, unknown))
 }
 
-// settled ends damped substitution: change of a step over the largest excess.
-const settled = 1e-11
+// settled ends damped substitution: change of a step over the largest excess,
+// or, where the answer is that nothing differs from the air, over the reference
+// temperature.
+const (
+	settled  = 1e-11
+	settled0 = 1e-15
+)
+
+func (b *Balance) settledBy(change float64, s *state, unknown []Node) bool {
+	return change <= math.Max(settled*b.largest(s, unknown), settled0*b.ref)
+}
 
 func (b *Balance) largest(s *state, unknown []Node) float64 {
 	most := 0.0
@@ -64,7 +73,7 @@ func (b *Balance) damped(s *state, unknown []Node, most int) []Step {
 		}
 		b.evaluate(s)
 		steps = append(steps, Step{N: n, Closure: rest, Change: change})
-		if change <= settled*b.largest(s, unknown) {
+		if b.settledBy(change, s, unknown) {
 			break
 		}
 	}

@@ -103,6 +103,16 @@ func (e Entry) Usable() bool {
 // names no surface material.
 const basalThreshold = "HM-basal"
 
+// IsTouch reports whether the entry is about a person touching a surface: burn
+// thresholds, personnel protection and the touch limits of product standards.
+func (e Entry) IsTouch() bool {
+	switch e.Group {
+	case "burn_threshold", "burn_model", "ASTM_C1055", "ASTM_C1057", "plant_practice", "IEC_62368-1", "IEC_61010-1", "IEC_62115 (children)", "IEC_60950-1 (superseded)":
+		return true
+	}
+	return strings.Contains(e.Item, "enclosures and covers") || strings.Contains(e.Item, "manual operating means")
+}
+
 // IsRise reports whether the entry limits the rise above the ambient air.
 func (e Entry) IsRise() bool { return e.Kind == kindRise }
 
@@ -159,6 +169,8 @@ func (e Entry) valueText() string {
 		return "at most " + value + unit
 	case e.Kind == kindRise:
 		return "rise of at most " + value + unit + " above ambient"
+	case band != "" && e.Kind == kindThreshold:
+		return value + unit + ", lower edge of the band " + band
 	case band != "":
 		return band
 	}
