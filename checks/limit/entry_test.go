@@ -116,7 +116,7 @@ func TestText(t *testing.T) {
 		"C1055-60C":             "at most 60 °C, personnel protection limit, metal, contact 5 s (industry practice from ASTM C1055)",
 		"61439-man-m":           "rise of at most 15 K above ambient, manual operating means, metal (IEC 61439-1 (2011/2020), Table 6)",
 		"508A-int":              "at most 50 °C (range 50 to 60 °C), usual internal-air design values (practice)",
-		"BT-cg-0.5":             "84 °C, lower edge of the band 84 to 90 °C, burn threshold band, ceramic glass stone, contact 0.5 s (EN 563:2001 / ISO 13732-1, 0.5 s extension table)",
+		"BT-cg-0.5":             "84 °C, lower edge of the band 84 to 90 °C, burn threshold band, ceramic glass stone, contact 0.5 s (EN 563:2001 / ISO 13732-1, 0.5 s extension table)",
 		"62368-TS2-60+-wood":    "at most 58 °C, TS2 limit: handles, knobs, grips held continuously (>= 1 min), wood, contact 60 s or longer (IEC 62368-1 ed.2/3, Table 38)",
 		"62368-TS1-<1-metal":    "at most 70 °C, TS1 limit: need not be touched to operate (<1 s), metal, contact below 1 s (IEC 62368-1 ed.2/3, Table 38)",
 		"62368-TS1-10-60-metal": "at most 51 °C, TS1 limit: held for short periods or touched occasionally (>10 s and <1 min), metal, contact 10 to 60 s (IEC 62368-1 ed.2/3, Table 38)",
