@@ -19,20 +19,24 @@ type builder struct {
 	root   *value
 	c      Case
 	inputs []Input
-	found  []func() // findings kept back until report
+	found  []misfit // kept back, since load cases share most of them
+}
+
+// misfit is a finding about values that do not fit together.
+type misfit struct {
+	code, path string
+	at         place
+	f          Finding
+	causes     []string // paths of what may have caused it, beside its own
+	always     bool     // counts only when every load case has it
 }
 
 func newBuilder(r *reader, root *value) *builder { return &builder{r: r, root: root} }
 
-func (b *builder) add(code string, at place, path string, f Finding) {
-	b.found = append(b.found, func() { b.r.add(code, at, path, f) })
-}
-
-// report hands the findings to the reader.
-func (b *builder) report() {
-	for _, say := range b.found {
-		say()
-	}
+// add keeps a finding. In a load case it is told at the first of path and
+// causes that the load case types.
+func (b *builder) add(code string, at place, path string, f Finding, causes ...string) {
+	b.found = append(b.found, misfit{code: code, path: path, at: at, f: f, causes: causes})
 }
 
 func (b *builder) build() {
@@ -150,10 +154,8 @@ func (b *builder) surroundings() {
 	s := &b.c.Surroundings
 	read := func(in *input) Quantity { return b.quantity(in, v.get(in.key), "surroundings."+in.key) }
 	s.Air = read(air)
-	if s.Radiant = read(radiant); !s.Radiant.Set && v.get("radiant") == nil && s.Air.Set {
-		s.Radiant = Quantity{SI: s.Air.SI, Typed: s.Air.Typed, Source: "air temperature", Set: true}
-		b.list(Input{Path: "surroundings.radiant", Label: radiant.label, Typed: s.Air.Typed, SI: plainSI(unit.Temperature, s.Air.SI),
-			Source: "default: the air temperature", Assumption: true})
+	if s.Radiant = read(radiant); v.get("radiant") == nil {
+		b.radiantAsAir()
 	}
 	s.Sees = b.perFace(sees, v.get("sees"), "surroundings.sees")
 	s.Sun = b.perFace(sun, v.get("sun"), "surroundings.sun")
@@ -165,6 +167,25 @@ func (b *builder) surroundings() {
 			Expected: "one of them", Help: "pressure is the absolute pressure of the air; altitude gives it by the standard atmosphere"})
 	}
 	s.Humidity = read(humidity)
+}
+
+// radiantAsAir is the default of the radiant temperature. It follows the air of
+// each load case, so one number for all would mislead.
+func (b *builder) radiantAsAir() {
+	s := &b.c.Surroundings
+	if s.Air.Set {
+		s.Radiant = Quantity{SI: s.Air.SI, Typed: s.Air.Typed, Source: "air temperature", Set: true}
+	}
+	line := Input{Path: "surroundings.radiant", Label: radiant.label, Typed: "as the air", Assumption: true}
+	switch {
+	case b.root.get("loads") != nil:
+		line.SI, line.Source = "the air temperature of each load case", "default: the air temperature of each load case"
+	case s.Air.Set:
+		line.SI, line.Source = plainSI(unit.Temperature, s.Air.SI), "default: the air temperature"
+	default:
+		return
+	}
+	b.list(line)
 }
 
 // perFace reads a quantity for each face of the body that is named.
@@ -187,8 +208,8 @@ func (b *builder) noFace(p pair, path string) bool {
 	if slices.Contains(b.r.faces, p.key) {
 		return false
 	}
-	b.add("E-305", p.at, join(path, p.key), Finding{Message: fmt.Sprintf("the body has no face %s in one of the load cases", quote(p.key)),
-		Found: quote(p.key), Expected: "one of " + oneOf(b.r.faces)})
+	b.add("E-305", p.at, join(path, p.key), Finding{Message: fmt.Sprintf("the body has no face %s", quote(p.key)),
+		Found: quote(p.key), Expected: "one of " + oneOf(b.r.faces)}, b.bodyPath("axis"))
 	return true
 }
 
@@ -217,6 +238,12 @@ func (b *builder) body() {
 	b.covers(in, v, path)
 	b.solids(v, path)
 	b.wallFits(v, path)
+}
+
+// bodyPath is the path of an input of the body.
+func (b *builder) bodyPath(key string) string {
+	kind, _ := bodyOf(b.root)
+	return "body." + kind + "." + key
 }
 
 func (b *builder) noBody() {
@@ -278,7 +305,7 @@ func (b *builder) coveredInSun(face string) {
 			continue
 		}
 		b.add("E-505", p.at, join(path, face), Finding{Message: fmt.Sprintf("%s is given for %s, a covered face, and has no effect", what, face),
-			Found: what + " on a covered face", Expected: "a free face", Nearest: ""})
+			Found: what + " on a covered face", Expected: "a free face"}, b.bodyPath("faces."+face))
 	}
 }
 
@@ -324,9 +351,9 @@ func (b *builder) layer(v *value, at place, path string) Layer {
 func (b *builder) catalogueMaterial(v *value, path string) string {
 	m, ok := material.Find(v.text)
 	if !ok {
-		names := materials.words()
-		b.add("E-307", v.at, path, Finding{Message: fmt.Sprintf("the material %s is not in the material table", quote(v.text)), Found: quote(v.text),
-			Expected: materials.expected(wall.part("material").example) + ", or a conductivity beside it", Nearest: nearest(v.text, names), Help: several(v.text, names)})
+		f := materials.unknown(v.text, wall.part("material").example)
+		f.Expected += "; or a conductivity beside it"
+		b.add("E-307", v.at, path, f)
 		return v.text
 	}
 	if m.Confidence == "low" {
@@ -366,7 +393,8 @@ func (b *builder) wallFits(v *value, path string) {
 	}
 	t := v.path("wall.thickness")
 	b.add("E-403", t.at, path+".wall.thickness", Finding{Message: "the wall is thicker than half of the body", Found: t.text,
-		Expected: "less than " + unit.SI.Show(unit.Length, least/2, 1), Help: "the wall lies within the outside size of the bare body; layers lie outside"})
+		Expected: "less than " + unit.SI.Show(unit.Length, least/2, 1), Help: "the wall lies within the outside size of the bare body; layers lie outside"},
+		join(path, "width"), join(path, "height"), join(path, "depth"), join(path, "diameter"))
 }
 
 // drive wants exactly one of heat and contents.
@@ -416,7 +444,7 @@ func (b *builder) uncertainty() {
 	read := func(key string) Quantity {
 		return b.quantity(uncertainty.part(key), b.root.get("uncertainty").get(key), "uncertainty."+key)
 	}
-	b.c.Uncertainty = Uncertainty{Heat: read("heat"), Air: read("air"), Contents: read("contents"), Sun: read("sun"), Correlation: read("correlation"),
+	b.c.Uncertainty = Uncertainty{Heat: read("heat"), Air: read("air"), Contents: read("contents"), Sun: read("sun"), Humidity: read("humidity"), Correlation: read("correlation"),
 		Emissivity: read("emissivity"), Inside: read("inside"), UpperZone: read("upper zone"), Conductivity: read("conductivity"), Thickness: read("thickness")}
 }
 
@@ -534,6 +562,7 @@ func (b *builder) sunOnUnknown() {
 			continue
 		}
 		b.add("E-409", p.at, "surroundings.sun."+p.key, Finding{Message: "sun is given, but the solar absorptance of the surface is not known",
-			Found: "no absorptance", Expected: "absorptance: 0.45 in the body, or a finish that has one"})
+			Found: "no absorptance", Expected: "absorptance: 0.45 in the body, or a finish that has one"},
+			b.bodyPath("finish"), b.bodyPath("emissivity"), b.bodyPath("faces."+p.key))
 	}
 }

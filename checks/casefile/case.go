@@ -48,7 +48,7 @@ type Note struct {
 // Load is the head of a load case.
 type Load struct {
 	Name    string
-	Purpose string // "touch", "component", "loss", "condensation" or "" (touch and component)
+	Purpose string // "touch", "component", "loss", "condensation" or "" (every limit is judged)
 	// Changed lists what this load changes against the case as described.
 	Changed []Input
 }
@@ -134,6 +134,7 @@ type Uncertainty struct {
 	Air          Quantity // K difference, air and radiant together
 	Contents     Quantity // K difference
 	Sun          Quantity // fraction
+	Humidity     Quantity // fraction, of the relative humidity, absolute
 	Correlation  Quantity // fraction of h where no scatter is published
 	Emissivity   Quantity // absolute; Set only when typed, otherwise the finish range is used
 	Inside       Quantity // absolute, of Inside.Emissivity

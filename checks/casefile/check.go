@@ -9,6 +9,7 @@ import (
 	"unicode/utf8"
 
 	"stillair/checks/unit"
+	"stillair/radiation/catalogue"
 )
 
 // Bounds of texts and lists.
@@ -28,7 +29,7 @@ func (r *reader) check(v *value, in *input, path string) {
 	case v.shape == nothing:
 		r.empty(v, in, path)
 		return
-	case v.shape != shapeOf(in.form):
+	case v.shape != shapeOf(in.form) || v.comma && in.form != quantity:
 		r.wrongShape(v, in, path)
 		return
 	}
@@ -109,7 +110,11 @@ func (r *reader) wrongShape(v *value, in *input, path string) {
 	if where == "" {
 		where = "the file"
 	}
-	r.bad(v, "E-206", path, Finding{Message: where + " has the wrong form", Found: found, Expected: in.expected()})
+	f := Finding{Message: where + " has the wrong form", Found: found, Expected: in.expected()}
+	if v.comma {
+		f.Help = needsQuotes
+	}
+	r.bad(v, "E-206", path, f)
 }
 
 func (r *reader) checkKeys(v *value, in *input, path string) {
@@ -128,6 +133,8 @@ func (r *reader) checkKeys(v *value, in *input, path string) {
 	})
 }
 
+const needsQuotes = "a text that holds a comma needs quotes between { and }"
+
 // unknownKey reports a key that has no place here.
 func (r *reader) unknownKey(v *value, in *input, p pair, path string) {
 	keys := in.keys()
@@ -141,22 +148,53 @@ func (r *reader) unknownKey(v *value, in *input, p pair, path string) {
 	}
 	f := Finding{Found: quote(p.key), Expected: "one of " + oneOf(keys), Nearest: nearest(p.key, keys),
 		Message: fmt.Sprintf("the %s %s is not known %s", noun, quote(p.key), whereWord(path))}
+	if in.form == byName {
+		f.Nearest = nearestFace(p.key, keys)
+	}
 	if owners := owners(p.key); code == "E-201" && len(owners) > 0 {
 		code = "E-202"
 		f.Message = fmt.Sprintf("the key %s does not belong %s", quote(p.key), whereWord(path))
 		f.Help = "it belongs in " + oneOf(owners)
+		if path == "" {
+			f.Nearest = v.moved(p, owners)
+		}
 	}
 	if strings.HasPrefix(path, "loads[") && p.key == "surroundings" {
 		f.Help = "a load case names air, radiant, sees, sun, altitude, pressure and humidity directly"
 	}
 	if v.flow && p.value.shape == nothing && !p.value.bad {
-		f.Help = "a text that holds a comma needs quotes between { and }"
+		f.Help = needsQuotes
 	}
+	v.means(f.Nearest)
+	r.add(code, p.at, join(path, p.key), f)
+}
+
+// means notes the key that a wrong one stands for.
+func (v *value) means(key string) {
 	if v.meant == nil {
 		v.meant = map[string]bool{}
 	}
-	v.meant[f.Nearest] = true
-	r.add(code, p.at, join(path, p.key), f)
+	v.meant[key] = true
+}
+
+// moved writes a key of the top level in the section it belongs in, when that
+// is the only one beside uncertainty; what is then missing there is not told
+// again.
+func (v *value) moved(p pair, owners []string) string {
+	owners = slices.DeleteFunc(slices.Clone(owners), func(o string) bool { return o == uncertainty.key })
+	if len(owners) != 1 || !slices.Contains(description.keys(), owners[0]) {
+		return ""
+	}
+	owner := owners[0]
+	if section := v.get(owner); section != nil {
+		section.means(p.key)
+	} else {
+		v.means(owner)
+	}
+	if p.value.shape != scalar {
+		return owner + ": {" + p.key + ": ...}"
+	}
+	return owner + ": {" + p.key + ": " + p.value.text + "}"
 }
 
 func whereWord(path string) string {
@@ -225,12 +263,32 @@ func (r *reader) checkQuantity(v *value, in *input, path string) {
 		}
 		v.bad = true
 		r.add(code, v.within(pe.Offset, pe.Width), path, Finding{
-			Message: fmt.Sprintf("%s is not %s: %s", path, in.kind.Name(), v.text), Found: pe.Found, Expected: pe.Expected, Help: pe.Hint})
+			Message: fmt.Sprintf("%s is not %s: %s", path, in.kind.Name(), v.text), Found: pe.Found, Expected: pe.Expected, Nearest: pe.Nearest, Help: pe.Hint})
 		return
 	}
 	if !in.span.holds(si) {
 		r.bad(v, "E-303", path, Finding{Message: path + " is out of range", Found: v.text, Expected: in.span.text})
+		return
 	}
+	r.coldKelvin(v, in, si, path)
+}
+
+// coldest temperature in kelvin that is taken for meant, K.
+const coldest = 150
+
+// coldKelvin warns of a place on the scale typed in kelvin that is more likely
+// meant in °C or as a rise.
+func (r *reader) coldKelvin(v *value, in *input, si float64, path string) {
+	number, inKelvin := strings.CutSuffix(strings.TrimSpace(v.text), "K")
+	if in.kind != unit.Temperature || !inKelvin || si >= coldest {
+		return
+	}
+	f := Finding{Message: fmt.Sprintf("%s is %s, which is %s", path, v.text, unit.SI.Show(unit.Temperature, si, 0)), Found: v.text,
+		Expected: "a temperature in °C, or one of at least 150 K", Nearest: strings.TrimRight(number, " \u00a0") + " °C"}
+	if in.key == "most" || in.key == "least" {
+		f.Help = "a rise over the air is written rise: " + v.text
+	}
+	r.add("E-507", v.at, path, f)
 }
 
 // within is the place of a part of a scalar; the whole of it when the text in
@@ -251,24 +309,51 @@ func (r *reader) checkWord(v *value, in *input, path string) {
 	if in.key == "at" || in.words.knows(v.text) {
 		return // a place depends on the body; see limits
 	}
-	words := in.words.words()
-	r.bad(v, in.words.code, path, Finding{Message: fmt.Sprintf("the %s %s is not known", in.words.noun, quote(v.text)),
-		Found: quote(v.text), Expected: in.words.expected(in.example), Nearest: nearest(v.text, words), Help: several(v.text, words)})
+	f := in.words.unknown(v.text, in.example)
+	if in.words == faceStates && startsWithDigit(v.text) {
+		face := path[strings.LastIndex(path, ".")+1:]
+		f.Help = "the temperature of what a face sees is written surroundings: {sees: {" + face + ": " + v.text + "}}"
+	}
+	r.bad(v, in.words.code, path, f)
 }
 
-// several tells that typed words fit more than one entry of a catalogue.
-func several(typed string, words []string) string {
-	var fit []string
+func startsWithDigit(s string) bool {
+	s = strings.TrimLeft(s, " +-\u2212")
+	return s != "" && s[0] >= '0' && s[0] <= '9'
+}
+
+// unknown is the finding for a word that cannot stand here. Words that fit
+// several entries of a catalogue are told so with these entries.
+func (v *vocabulary) unknown(typed, example string) Finding {
+	words := v.words()
+	f := Finding{Message: fmt.Sprintf("the %s %s is not known", v.noun, quote(typed)), Found: quote(typed)}
+	fit := fitting(typed, words)
+	if v.known == nil || len(fit) == 0 {
+		f.Expected, f.Nearest = v.expected(example), nearest(typed, words)
+		return f
+	}
+	if len(fit) == 1 {
+		f.Expected, f.Nearest = v.expected(example), fit[0]
+		return f
+	}
+	f.Message = fmt.Sprintf("the %s %s fits %d entries of the table", v.noun, quote(typed), len(fit))
+	f.Expected = "one of " + first(fit, 6)
+	return f
+}
+
+// fitting lists the names that hold the words typed, else those that hold them
+// as parts of words.
+func fitting(typed string, names []string) (fit []string) {
+	if fit = catalogue.Holding(typed, names); len(fit) > 0 {
+		return fit
+	}
 	parts := strings.Fields(strings.ToLower(typed))
-	for _, w := range words {
-		if len(parts) > 0 && holdsAll(strings.ToLower(w), parts) {
-			fit = append(fit, w)
+	for _, name := range names {
+		if len(strings.Join(parts, "")) >= 3 && holdsAll(strings.ToLower(name), parts) {
+			fit = append(fit, name)
 		}
 	}
-	if len(fit) < 2 {
-		return ""
-	}
-	return "it could mean: " + strings.Join(fit[:min(len(fit), 6)], "; ")
+	return fit
 }
 
 func (r *reader) checkText(v *value, in *input, path string) {

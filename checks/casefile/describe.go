@@ -111,6 +111,7 @@ var (
 	share          = &span{0, 1, false, "0 % to 100 %"}
 	mostOf         = &span{0, 0.9, false, "0 % to 90 %"}
 	half           = &span{0, 0.5, false, "0 to 0.5"}
+	half100        = &span{0, 0.5, false, "0 % to 50 %"}
 	wet            = &span{0, 1, true, "more than 0 % and at most 100 %"}
 	difference     = &span{0, 1000, false, "0 K to 1000 K"}
 	someDifference = &span{0, 1000, true, "more than 0 K and at most 1000 K"}
@@ -198,8 +199,8 @@ var description = &input{form: section, help: "A case of stillair: a body in sti
 	contents,
 	inside,
 	methods,
-	{key: "limits", help: "What the temperatures are judged against.", form: list, each: limitEntry},
-	{key: "loads", help: "Load cases: each has a name and the inputs it changes. Left out, the case is judged as described.", form: list, each: loadEntry},
+	{key: "limits", help: "What the temperatures are judged against. The list holds for every load case; for: in a load case says which of them it is judged by.", form: list, each: limitEntry},
+	{key: "loads", help: "Load cases: each has a name and the inputs it changes. Sections are merged key by key; a list typed in a load case replaces the whole list of the case. Left out, the case is judged as described.", form: list, each: loadEntry},
 	uncertainty,
 }}
 
@@ -286,7 +287,7 @@ var limitEntry = &input{help: "One limit: where, how much, and who says so.", fo
 
 var loadEntry = &input{help: "One load case.", form: section, parts: []*input{
 	{key: "name", help: "Name of the load case.", required: true, example: "summer sun"},
-	{key: "for", help: "What the load case is for.", form: word, words: fixed("purpose", "touch", "component", "loss", "condensation"), example: "touch"},
+	{key: "for", help: "What the load case is for. touch: judges touch limits and limits on faces. component: judges every limit but those of touch and condensation. condensation: judges least and no-condensation limits. loss: nothing is judged, the heat is reported. Left out, every limit is judged.", form: word, words: fixed("purpose", "touch", "component", "loss", "condensation"), example: "touch"},
 	air.optional(), radiant, sees, sun, altitude, pressure, humidity, heat, contents,
 	body.optional(), inside, methods, uncertainty,
 }}
@@ -296,6 +297,7 @@ var uncertainty = &input{key: "uncertainty", help: "Shifts for the uncertainty o
 	{key: "air", label: "uncertainty of the air temperature", help: "Of air and radiant temperature together.", form: quantity, kind: unit.TemperatureDifference, span: difference, usual: "2 K", why: "stated assumption", example: "2 K"},
 	{key: "contents", label: "uncertainty of the contents temperature", help: "Of the temperature of the contents.", form: quantity, kind: unit.TemperatureDifference, span: difference, usual: "2 K", why: "stated assumption", example: "2 K"},
 	{key: "sun", label: "uncertainty of the sun", help: "Of the irradiance, relative.", form: quantity, kind: unit.Percent, span: share, usual: "10 %", why: "stated assumption", example: "10 %"},
+	{key: "humidity", label: "uncertainty of the humidity", help: "Of the relative humidity, in percent points.", form: quantity, kind: unit.Percent, span: half100, usual: "5 %", why: "stated assumption", example: "5 %"},
 	{key: "correlation", label: "uncertainty of the film coefficient", help: "Of the film coefficient where its source publishes no scatter, relative.", form: quantity, kind: unit.Percent, span: mostOf, usual: "20 %", why: "stated assumption where the correlation has no published scatter", example: "20 %"},
 	{key: "emissivity", label: "uncertainty of the emissivity", help: "Of the outside emissivity, absolute; left out, the range of the finish, or 0.05 around a typed emissivity.", form: quantity, kind: unit.Ratio, span: half, example: "0.05"},
 	{key: "inside", label: "uncertainty of the emissivity inside", help: "Of the effective emissivity inside, absolute.", form: quantity, kind: unit.Ratio, span: half, usual: "0.2", why: "stated assumption", example: "0.2"},

@@ -57,8 +57,10 @@ func axis(usual string) *input {
 func facesInput(names ...string) *input {
 	return &input{key: "faces", help: "Faces that shed no heat, with the reason.", form: byName, names: names,
 		each: &input{label: "face", help: "What covers this face; free when nothing does.", form: word,
-			words: fixed("state of a face", "covered", "wall", "floor", "neighbour", free), usual: free, why: "every face sheds heat", example: "wall"}}
+			words: faceStates, usual: free, why: "every face sheds heat", example: "wall"}}
 }
+
+var faceStates = fixed("state of a face", "covered", "wall", "floor", "neighbour", free)
 
 // free is the state of a face that sheds heat.
 const free = "free"
@@ -72,7 +74,7 @@ var layerParts = []*input{
 
 var wall = &input{key: "wall", label: "wall", help: "The wall, within the outside size of the bare body; left out, it is not modelled.", form: section, parts: layerParts}
 
-var layers = &input{key: "layers", label: "layer", help: "Layers on the outside, from the wall outwards.", form: list,
+var layers = &input{key: "layers", label: "layer", help: "Layers on the outside, from the wall outwards. Typed in a load case, the list replaces the whole list of the case.", form: list,
 	each: &input{help: "One layer.", form: section, parts: layerParts}}
 
 var finish = &input{key: "finish", label: "finish", help: "Name in the finish table, which gives emissivity and solar absorptance.",

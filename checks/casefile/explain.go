@@ -30,8 +30,8 @@ var rulings = []ruling{
 	{"E-303", "The value is impossible or far outside what the calculation is for: a length that is not positive, an emissivity outside 0 to 1, a temperature below absolute zero, a humidity above 100 %. The finding gives the range."},
 	{"E-304", "The word is not one of those that can stand here. The finding lists them and names the nearest."},
 	{"E-305", "The body has no face or place of this name. The faces follow from the kind of body and the direction of its axis: a box has front, back, left, right, top and bottom; a lying cylinder has side, left end and right end."},
-	{"E-306", "The finish is not in the finish table, or its name fits several entries. Use the name or the id of an entry, or type emissivity: and absorptance: instead."},
-	{"E-307", "The material is not in the material table, or its name fits several entries. Use the name or the id of an entry, or type conductivity: beside it; then the material can have any name."},
+	{"E-306", "The finish is not in the finish table, or the words typed fit several entries. Words find an entry when its name alone holds all of them. Use the name or the id of an entry, or type emissivity: and absorptance: instead."},
+	{"E-307", "The material is not in the material table, or the words typed fit several entries. Words find an entry when its name alone holds all of them. Use the name or the id of an entry, or type conductivity: beside it; then the material can have any name."},
 	{"E-308", "There is no burn threshold for this surface material. What counts is the material a person touches, coating included."},
 	{"E-309", "The limit table has no entry of this id that a temperature can be judged against."},
 	{"E-310", "There is no such situation of free convection. The keys of methods: are situations, such as vertical plate."},
@@ -60,6 +60,7 @@ var rulings = []ruling{
 	{"E-504", "Warning. Thresholds for contact of less than 1 s suppose unintended touch by a person who lets go at once. Children, the elderly and people who hold on need longer contact times."},
 	{"E-505", "Warning. Sun or a radiant temperature is given for a covered face. A covered face sheds and takes up no heat, so the value has no effect."},
 	{"E-506", "Warning. The load case changes the air temperature while a typed radiant temperature stays. On a cold night the surroundings are rarely as warm as on a summer day."},
+	{"E-507", "Warning. A temperature is typed in kelvin and lies below 150 K (-123 °C). A number like that is mostly meant in °C, or as a rise over the air, which has a key of its own in limits (rise: 55 K)."},
 }
 
 // Codes lists the codes of all findings.

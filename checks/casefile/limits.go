@@ -75,6 +75,8 @@ func (b *builder) place(v *value, path string) {
 	switch {
 	case slices.Contains(fit, at.text) && covered:
 		f.Message, f.Help = "a limit is set for "+at.text+", a covered face", "a covered face has no temperature of its own"
+		b.found = append(b.found, misfit{code: "E-406", path: join(path, "at"), at: at.at, f: f, always: true})
+		return
 	case slices.Contains(fit, at.text) && needsFace && !slices.Contains(b.r.faces, at.text) && at.text != anyFace:
 		f.Message, f.Expected = "a touch or condensation limit needs a face", "any face, or one of "+oneOf(b.r.faces)
 	case slices.Contains(fit, at.text):
@@ -82,11 +84,11 @@ func (b *builder) place(v *value, path string) {
 	case limitEntry.part("at").words.knows(at.text):
 		f.Message = fmt.Sprintf("a %s has no %s", b.c.Body.Kind, at.text)
 	default:
-		f.Message, f.Nearest = "the place "+quote(at.text)+" is not known", nearest(at.text, fit)
+		f.Message, f.Nearest = "the place "+quote(at.text)+" is not known", nearestFace(at.text, fit)
 		b.add("E-305", at.at, join(path, "at"), f)
 		return
 	}
-	b.add("E-406", at.at, join(path, "at"), f)
+	b.add("E-406", at.at, join(path, "at"), f, b.bodyPath("axis"))
 }
 
 // oneCriterion wants exactly one criterion.

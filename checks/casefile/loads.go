@@ -90,12 +90,32 @@ func overlay(load *value) *value {
 	return top
 }
 
-// load checks one load case and makes its Case.
-func (r *reader) load(base, item *value, i int) (Case, bool) {
+// loads checks the load cases and makes a Case of each.
+func (r *reader) loads(base, all *value, described *builder) (cases []Case) {
+	var built []*loadBuilder
+	for i, item := range all.items {
+		if b := r.load(base, item, i); b != nil {
+			built, cases = append(built, b), append(cases, b.c)
+		}
+	}
+	r.sameNames(all)
+	r.tellOfLoads(described, built)
+	return cases
+}
+
+// loadBuilder builds a load case: over is what it types, as a partial case.
+type loadBuilder struct {
+	*builder
+	item, over *value
+	number     int
+}
+
+// load checks one load case and makes its Case; nil when it is none.
+func (r *reader) load(base, item *value, i int) *loadBuilder {
 	path := itemPath("loads", i)
 	if item.shape != mapping {
 		r.check(item, loadEntry, path)
-		return Case{}, false
+		return nil
 	}
 	r.sameBody(base, item, path)
 	over := overlay(item)
@@ -106,13 +126,14 @@ func (r *reader) load(base, item *value, i int) (Case, bool) {
 	}
 	r.faces = facesOf(kind, axis)
 	r.check(item, loadEntry, path)
-	b := newBuilder(r, merged)
-	b.required(item, loadEntry, item.at, path)
+	own := newBuilder(r, item)
+	own.required(item, loadEntry, item.at, path)
+	r.tell(own.found)
+	b := &loadBuilder{newBuilder(r, merged), item, over, i + 1}
 	b.build()
 	b.c.Load = Load{Name: item.textOf("name"), Purpose: item.textOf("for"), Changed: changes(over, description, "")}
 	r.radiantStays(base, item, path)
-	b.report()
-	return b.c, true
+	return b
 }
 
 func (v *value) textOf(key string) string {

@@ -81,20 +81,14 @@ func (r *reader) read(root *value, d Defaults, f *File) {
 	loads := root.get("loads")
 	described := newBuilder(r, base)
 	described.build()
-	defer func() { f.Inputs = needed(described.inputs, f.Cases) }()
 	if loads == nil || loads.bad || loads.shape != sequence || len(loads.items) == 0 {
-		described.report()
 		described.c.Load = Load{Name: AsDescribed}
 		f.Cases = []Case{described.c}
-		r.condensation(f.Cases, root)
-		return
+		r.tell(described.found)
+	} else {
+		f.Cases = r.loads(base, loads, described)
 	}
-	for i, item := range loads.items {
-		if c, ok := r.load(base, item, i); ok {
-			f.Cases = append(f.Cases, c)
-		}
-	}
-	r.sameNames(loads)
+	f.Inputs = needed(described.inputs, f.Cases)
 	r.condensation(f.Cases, root)
 }
 
@@ -107,6 +101,7 @@ func needed(inputs []Input, cases []Case) []Input {
 		"sun":          func(c Case) bool { return len(c.Surroundings.Sun) > 0 },
 		"inside":       func(c Case) bool { return c.Body.Kind == "box" },
 		"upper zone":   func(c Case) bool { return c.Body.Kind == "box" },
+		"humidity":     func(c Case) bool { return c.Surroundings.Humidity.Set },
 		"conductivity": func(c Case) bool { return c.Body.Wall != nil || len(c.Body.Layers) > 0 },
 		"thickness":    func(c Case) bool { return c.Body.Wall != nil || len(c.Body.Layers) > 0 },
 	} {
@@ -209,10 +204,12 @@ func (r *reader) setting(to *value, in *input, typed string) {
 	v := &value{shape: scalar, text: typed, at: place{1, len(in.key) + 3, len([]rune(typed))}}
 	probe.check(v, in, in.key)
 	for _, f := range probe.findings {
-		f.Code, f.Help = "E-415", "change the setting or type the value in the case"
+		if f.Severity == Error {
+			f.Code, f.Help = "E-415", "change the setting or type the value in the case"
+		}
 		r.findings = append(r.findings, f)
 	}
-	if len(probe.findings) == 0 {
+	if !HasErrors(probe.findings) {
 		to.pairs = append(to.pairs, pair{key: in.key, value: &value{shape: scalar, text: typed, setting: true}})
 	}
 }

@@ -191,7 +191,7 @@ func TestColumnsAreCharacters(t *testing.T) {
 func TestTurnedAxis(t *testing.T) {
 	text := "title: x\nsurroundings: {air: 30 °C}\nbody: {vessel: {diameter: 1 m, length: 2 m, emissivity: 0.9, faces: {top head: wall}}}\nheat: 1 W\nloads: [{name: a}, {name: b, body: {vessel: {axis: horizontal}}}]\n"
 	f, findings := Read("a", []byte(text), Defaults{})
-	if f != nil || len(findings) != 1 || findings[0].Code != "E-305" || findings[0].Line != 3 {
+	if f != nil || len(findings) != 1 || findings[0].Code != "E-305" || findings[0].Line != 5 || !strings.HasPrefix(findings[0].Message, `in load case "b": `) {
 		t.Error(formatted(findings))
 	}
 }

@@ -144,7 +144,7 @@ func (in *input) mustHave() (keys []string) {
 // quantitySchema is one string with a pattern. YAML reads a bare 0.85 as a
 // number, so plain numbers may be numbers.
 func (in *input) quantitySchema(s object) {
-	s["type"], s["pattern"] = "string", unit.Pattern(in.kind)
+	s["type"], s["pattern"], s["maxLength"] = "string", unit.Pattern(in.kind), unit.MaxText
 	if in.kind == unit.Ratio || in.kind == unit.Percent {
 		s["type"] = []string{"string", "number"}
 		s["minimum"], s["maximum"] = in.span.low, in.span.high

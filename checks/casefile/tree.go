@@ -44,6 +44,7 @@ type value struct {
 	text   string // of a scalar
 	quoted bool
 	flow   bool // mapping in { }
+	comma  bool // scalar that a comma cut in two between { and }
 	at     place
 	pairs  []pair
 	items  []*value
@@ -327,6 +328,9 @@ func (r *reader) addPair(v *value, n *ast.MappingValueNode, first map[string]pla
 		return
 	}
 	at := r.at(key)
+	if v.rejoin(key.Value, at, n.Value) {
+		return
+	}
 	if was, twice := first[key.Value]; twice {
 		r.add("E-203", at, key.Value, Finding{Message: "the key " + quote(key.Value) + " stands here twice",
 			Found: quote(key.Value) + " again", Expected: "each key once", Help: "the first one is on " + lineWord(was.line)})
@@ -334,6 +338,27 @@ func (r *reader) addPair(v *value, n *ast.MappingValueNode, first map[string]pla
 	}
 	first[key.Value] = at
 	v.pairs = append(v.pairs, pair{key.Value, at, r.nodeOr(n.Value, depth)})
+}
+
+// rejoin puts together a number with a decimal comma, which YAML reads as a
+// value and a further key between { and }, so that it gets one finding.
+func (v *value) rejoin(key string, at place, node ast.Node) bool {
+	_, empty := node.(*ast.NullNode)
+	if !v.flow || !empty || len(v.pairs) == 0 || !startsWithDigit(key) {
+		return false
+	}
+	last := v.pairs[len(v.pairs)-1].value
+	digits := strings.TrimLeft(last.text, "+-\u2212")
+	if last.shape != scalar || last.quoted || digits == "" || strings.Trim(digits, "0123456789") != "" {
+		return false
+	}
+	if at.line != last.at.line || at.column != last.at.column+last.at.width+1 {
+		return false
+	}
+	last.text += "," + key
+	last.at.width += 1 + at.width
+	last.comma = true
+	return true
 }
 
 // foreign reports YAML that a case file does not use.

@@ -103,6 +103,28 @@ func oneOf(words []string) string {
 	return strings.Join(words[:most], between) + fmt.Sprintf(" and %d more", len(words)-most)
 }
 
+// first lists at most n words.
+func first(words []string, n int) string {
+	text := strings.Join(words[:min(n, len(words))], "; ")
+	if len(words) > n {
+		text += fmt.Sprintf(" and %d more", len(words)-n)
+	}
+	return text
+}
+
+// faceWords are other words for faces.
+var faceWords = map[string]string{"rear": "back", "rear side": "back", "backside": "back", "door": "front", "front side": "front",
+	"left side": "left", "right side": "right", "roof": "top", "ceiling": "top", "lid": "top", "upside": "top",
+	"base": "bottom", "floor": "bottom", "underside": "bottom", "jacket": "side", "mantle": "side"}
+
+// nearestFace is nearest for faces, which have other words beside slips.
+func nearestFace(typed string, faces []string) string {
+	if face := faceWords[strings.ToLower(strings.TrimSpace(typed))]; slices.Contains(faces, face) {
+		return face
+	}
+	return nearest(typed, faces)
+}
+
 // facesOf lists the faces of a body, as the geometry names them.
 func facesOf(kind, axis string) []string {
 	switch {

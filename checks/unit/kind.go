@@ -61,6 +61,9 @@ const (
 	psi   = pound * 9.80665 / (inch * inch)
 	degF  = 1 / 1.8
 
+	// horsepower is 745.69987158227022 W.
+	horsepower = 550 * foot * pound * 9.80665
+
 	// 0 °C and 0 °F in kelvin: T/K = t/°C + 273.15 = (t/°F + 459.67)/1.8.
 	zeroC = 273.15
 	zeroF = 459.67 / 1.8

@@ -14,6 +14,7 @@ type ParseError struct {
 	Found    string // what stands there, in words
 	Expected string // what was expected, with an example
 	Hint     string // one more sentence, or ""
+	Nearest  string // the unit that was most likely meant, or ""
 	// Offset and Width, in characters, mark the part of the text that is wrong.
 	Offset, Width int
 	// InUnit is true when the number could be read and its unit is at fault.
@@ -34,7 +35,7 @@ const (
 	maxText      = 80 // characters of a quantity
 	maxExponent  = 30 // power of ten of a number
 	maxUnitPower = 6
-	maxNesting   = 4
+	maxNesting   = 1 // brackets in brackets are not read
 )
 
 // number is digits with a decimal point, thin spaces between groups of three.
@@ -52,8 +53,11 @@ func Parse(text string, k Kind) (si float64, err error) {
 	if perr != nil {
 		return 0, perr
 	}
+	p.spaces()
+	unitAt := p.pos
 	si, perr = p.quantity(value)
 	if perr != nil {
+		p.suggest(perr, unitAt)
 		perr.InUnit = true
 		return 0, perr
 	}
@@ -192,7 +196,6 @@ func (p *parser) comma(start int, digits, rest string) *ParseError {
 // quantity reads the unit behind the number and converts.
 func (p *parser) quantity(value float64) (float64, *ParseError) {
 	in := p.kind.info()
-	p.spaces()
 	start := p.pos
 	if start == len(p.runes) {
 		if in.dim == (dim{}) {
@@ -210,7 +213,7 @@ func (p *parser) quantity(value float64) (float64, *ParseError) {
 	if p.pos < len(p.runes) {
 		return 0, p.unexpected()
 	}
-	typed := strings.TrimSpace(string(p.runes[start:]))
+	typed := strings.Trim(string(p.runes[start:]), " ")
 	if got.dim != in.dim {
 		return 0, p.fail(start, len(p.runes), kindOf(got.dim)+" ("+typed+")", wrongUnitHint(typed, p.kind))
 	}
@@ -242,7 +245,7 @@ func wrongUnitHint(typed string, k Kind) string {
 // temperature reads a unit of temperature and keeps places and steps apart.
 func (p *parser) temperature(value float64) (float64, *ParseError) {
 	start := p.pos
-	typed := strings.TrimSpace(string(p.runes[start:]))
+	typed := strings.Trim(string(p.runes[start:]), " ")
 	s, ok := lookup(temperatureName(typed))
 	if !ok || s.dim != (dim{0, 0, 0, 1}) {
 		return 0, p.notATemperature(start, typed)
@@ -250,7 +253,9 @@ func (p *parser) temperature(value float64) (float64, *ParseError) {
 	scaled := value * s.num / s.den
 	if p.kind == TemperatureDifference {
 		if s.scale == celsius || s.scale == fahrenheit {
-			return 0, p.fail(start, len(p.runes), "a temperature ("+typed+")", differenceHint(value, s.scale))
+			err := p.fail(start, len(p.runes), "a temperature ("+typed+")", differenceHint(value, s.scale))
+			err.Nearest = map[int]string{celsius: "K", fahrenheit: "Δ°F"}[s.scale]
+			return 0, err
 		}
 		return p.finite(scaled)
 	}
@@ -365,7 +370,7 @@ func (p *parser) base(depth int) (symbol, *ParseError) {
 		return p.name()
 	}
 	if depth == maxNesting {
-		return symbol{}, p.fail(p.pos, len(p.runes), "too many brackets", "")
+		return symbol{}, p.fail(p.pos, len(p.runes), "too many brackets", "one pair of brackets below the line is enough")
 	}
 	open := p.pos
 	p.pos++
@@ -397,7 +402,7 @@ func (p *parser) name() (symbol, *ParseError) {
 	}
 	s, ok := lookup(name)
 	if !ok {
-		return s, p.fail(start, p.pos, "the unknown unit "+quote(name), unknownHint(name))
+		return s, p.unknown(start, name)
 	}
 	return s, nil
 }
@@ -414,25 +419,6 @@ func (p *parser) secondWord(first string) string {
 }
 
 var secondWord = regexp.MustCompile(`^ (?:°|deg ?)?[CFRK]`)
-
-// unknownHint guesses at capitals and joined units.
-func unknownHint(name string) string {
-	if name == "mK" || name == "mC" {
-		return "write m·K for metre kelvin"
-	}
-	var near []string
-	for _, try := range usual {
-		if strings.EqualFold(try, name) {
-			near = append(near, try)
-		}
-	}
-	if len(near) == 1 {
-		return "capital and small letters differ: write " + near[0]
-	}
-	return ""
-}
-
-var usual = []string{"kW", "W", "mm", "cm", "m", "km", "in", "ft", "Pa", "kPa", "bar", "psi", "s", "min", "h", "Btu", "deg", "rad", "K"}
 
 // power reads an exponent: ², ⁻², ^2, ^-2 or a plain digit.
 func (p *parser) power() (int, *ParseError) {

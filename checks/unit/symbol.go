@@ -24,7 +24,8 @@ const (
 )
 
 // symbols lists what can be typed. Factors: NIST SP 811 (2008) appendix B,
-// B.8 (exact ones in bold there): in, ft, lb, lbf, Btu(IT), psi, °F, °R, atm, bar.
+// B.8 (exact ones in bold there): in, ft, lb, lbf, Btu(IT), cal(IT), psi, °F,
+// °R, atm, bar; hp is the mechanical horsepower of 550 ft·lbf/s.
 var symbols = func() map[string]symbol {
 	var (
 		kelvin = dim{0, 0, 0, 1}
@@ -48,6 +49,8 @@ var symbols = func() map[string]symbol {
 		"lb":  {45359237, 1e8, dim{0, 1}, false, 0},
 		"lbf": {45359237 * 9.80665, 1e8, force, false, 0},
 		"Btu": {105505585262, 1e8, energy, false, 0},
+		"cal": {41868, 10000, energy, true, 0},
+		"hp":  {horsepower, 1, dim{2, 1, -3}, false, 0},
 		"psi": {psi, 1, dim{-1, 1, -2}, false, 0},
 		"atm": {101325, 1, dim{-1, 1, -2}, false, 0},
 		"rad": {1, 1, dim{0, 0, 0, 0, 1}, false, 0},

@@ -81,6 +81,9 @@ var good = []struct {
 	{"0.3 K/W", Resistance, 0.3, 0},
 	{"12\u2009345 Pa", Pressure, 12345, 0},
 	{"1.2e3 W", Power, 1200, 0},
+	{"1 hp", Power, 745.69987158227022, 1e-15},           // 550 ft·lbf/s; SP 811 B.8 prints 7.456999 E+02
+	{"1 kcal/h", Power, 4186.8 / 3600, 1e-15},            // calorie (IT) 4.1868 J exactly, SP 811 B.8
+	{"0.04 kcal/(h·m·°C)", Conductivity, 0.04652, 1e-12}, // 0.04 × 4186.8/3600
 }
 
 func TestParseReads(t *testing.T) {
@@ -139,7 +142,7 @@ func TestParseRefuses(t *testing.T) {
 		{"5 /m", Length, "a unit symbol is missing", 2, 2},
 		{"5 m/", Length, "", 4, 1},
 		{"5 m²/m", Length, "write one plain unit", 2, 4},
-		{"5 ((((((m))))))", Area, "too many brackets", 6, 9},
+		{"5 ((((((m))))))", Area, "too many brackets", 3, 12},
 		{"40 °C °C", Temperature, "", 3, 5},
 		{"0.85 W", Ratio, "found a power (W), expected a number, such as 0.85", 5, 1},
 	} {

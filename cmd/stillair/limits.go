@@ -1,6 +1,8 @@
 package main
 
 import (
+	"regexp"
+	"strconv"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -27,10 +29,27 @@ func limitList() *listing {
 		if e.Usable() {
 			rule = "yes"
 		}
-		l.rows = append(l.rows, listRow{e.ID, []string{e.ID, rule, e.Text(), e.Confidence},
-			[][2]string{{"id", e.ID}, {"says", e.Text()}, {"usable as rule", rule}, {"standard", e.Standard}, {"clause", e.Clause},
+		l.rows = append(l.rows, listRow{e.ID, []string{e.ID, rule, readableTimes(e.Text()), e.Confidence},
+			[][2]string{{"id", e.ID}, {"says", readableTimes(e.Text())}, {"usable as rule", rule}, {"standard", e.Standard}, {"clause", e.Clause},
 				{"conditions", e.Conditions}, {"quoted from", e.Source}, {"verified by", e.VerifiedBy},
 				{"confidence", e.Confidence}, {"notes", e.Notes}}})
 	}
 	return l
+}
+
+var seconds = regexp.MustCompile(`\b([0-9]+)([ \x{a0}])s\b`)
+
+// readableTimes writes whole minutes and hours for long times in seconds.
+func readableTimes(text string) string {
+	return seconds.ReplaceAllStringFunc(text, func(s string) string {
+		m := seconds.FindStringSubmatch(s)
+		n, err := strconv.Atoi(m[1])
+		switch {
+		case err != nil || n < 60 || n%60 != 0:
+			return s
+		case n%3600 == 0:
+			return strconv.Itoa(n/3600) + m[2] + "h"
+		}
+		return strconv.Itoa(n/60) + m[2] + "min"
+	})
 }

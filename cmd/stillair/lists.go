@@ -3,8 +3,10 @@ package main
 import (
 	"bytes"
 	"fmt"
+	"regexp"
 	"strings"
 	"text/tabwriter"
+	"unicode/utf8"
 )
 
 // listing is a catalogue as a person searches it: a line for each entry, and
@@ -67,41 +69,124 @@ func (a *app) show(l *listing, args []string) error {
 		}
 		return usageError(help, "No %s matches %q.", l.what, words)
 	case 1:
-		return a.out.print(oneEntry(rows[0]))
+		return a.out.print(oneEntry(rows[0], a.wide))
 	}
-	return a.out.print(l.lines(rows))
+	return a.out.print(l.lines(rows, a.wide))
 }
 
-func (l *listing) lines(rows []listRow) []byte {
-	var b bytes.Buffer
-	w := tabwriter.NewWriter(&b, 0, 0, 2, ' ', 0)
-	fmt.Fprintln(w, strings.Join(l.heads, "\t"))
+// lines prints a line for each entry. On a terminal of some width the widest
+// column is wrapped to fit; elsewhere nothing is.
+func (l *listing) lines(rows []listRow, wide int) []byte {
+	table := [][]string{l.heads}
 	for _, r := range rows {
-		fmt.Fprintln(w, strings.Join(r.cells, "\t"))
+		table = append(table, r.cells)
 	}
-	_ = w.Flush() // into memory
-	if l.foot != "" {
-		fmt.Fprintf(&b, "\n%s\n", l.foot)
-	}
-	return b.Bytes()
-}
-
-func oneEntry(r listRow) []byte {
 	var b bytes.Buffer
-	w := tabwriter.NewWriter(&b, 0, 0, 2, ' ', 0)
-	for _, f := range r.fields {
-		if f[1] != "" {
-			fmt.Fprintf(w, "%s\t%s\n", f[0], f[1])
+	w := tabwriter.NewWriter(&b, 0, 0, gutter, ' ', 0)
+	column, width := widest(table, wide)
+	for _, cells := range table {
+		for _, line := range wrapCell(cells, column, width) {
+			fmt.Fprintln(w, strings.Join(line, "\t"))
 		}
 	}
 	_ = w.Flush() // into memory
-	return b.Bytes()
+	text := blankEnds.ReplaceAll(b.Bytes(), nil)
+	if l.foot != "" {
+		text = fmt.Appendf(text, "\n%s\n", l.foot)
+	}
+	return text
 }
 
-// span shows low..high, or one number when both are the same.
+// blankEnds are the blanks that padded columns leave at the ends of lines.
+var blankEnds = regexp.MustCompile(`(?m) +$`)
+
+// oneEntry prints every field of an entry, its lines below each other.
+func oneEntry(r listRow, wide int) []byte {
+	var table [][]string
+	for _, f := range r.fields {
+		name := f[0]
+		for _, line := range strings.Split(f[1], "\n") {
+			if line != "" {
+				table = append(table, []string{name, line})
+				name = ""
+			}
+		}
+	}
+	return (&listing{heads: table[0]}).lines(rowsOf(table[1:]), wide)
+}
+
+func rowsOf(table [][]string) (rows []listRow) {
+	for _, cells := range table {
+		rows = append(rows, listRow{cells: cells})
+	}
+	return rows
+}
+
+// gutter is the space between columns, leastColumn the narrowest a column is
+// wrapped to.
+const (
+	gutter      = 2
+	leastColumn = 24
+)
+
+// widest is the widest column of a table and the width it can have on a
+// terminal; 0 when it need not be wrapped.
+func widest(table [][]string, wide int) (column, width int) {
+	widths := make([]int, len(table[0]))
+	total := gutter * (len(widths) - 1)
+	for i := range widths {
+		for _, cells := range table {
+			widths[i] = max(widths[i], utf8.RuneCountInString(cells[i]))
+		}
+		total += widths[i]
+		if widths[i] > widths[column] {
+			column = i
+		}
+	}
+	if wide <= 0 || total <= wide {
+		return column, 0
+	}
+	return column, max(leastColumn, widths[column]-(total-wide))
+}
+
+// wrapCell breaks one cell at spaces into lines of a width and leaves the
+// others empty from the second line on. Width 0 breaks nothing.
+func wrapCell(cells []string, column, width int) (lines [][]string) {
+	if width == 0 {
+		return [][]string{cells}
+	}
+	for i, part := range wrap(cells[column], width) {
+		line := make([]string, len(cells))
+		if i == 0 {
+			copy(line, cells)
+		}
+		line[column] = part
+		lines = append(lines, line)
+	}
+	return lines
+}
+
+// wrap breaks a text at spaces; a longer word keeps its length.
+func wrap(text string, width int) []string {
+	lines := []string{""}
+	for _, word := range strings.Split(text, " ") {
+		last := &lines[len(lines)-1]
+		switch {
+		case *last == "":
+			*last = word
+		case utf8.RuneCountInString(*last)+1+utf8.RuneCountInString(word) <= width:
+			*last += " " + word
+		default:
+			lines = append(lines, word)
+		}
+	}
+	return lines
+}
+
+// span shows low to high, or one number when both are the same.
 func span(low, high float64) string {
 	if low == high {
 		return fmt.Sprintf("%.4g", low)
 	}
-	return fmt.Sprintf("%.4g..%.4g", low, high)
+	return fmt.Sprintf("%.4g to %.4g", low, high)
 }

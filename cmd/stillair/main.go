@@ -28,6 +28,7 @@ type app struct {
 	wide    int  // characters across standard output; 0 when it is no terminal
 	noColor bool // asked for on the command line
 	file    string
+	warned  bool // of variables of the environment
 }
 
 // run executes the command line and gives the exit code.

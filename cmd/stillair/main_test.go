@@ -257,8 +257,15 @@ func TestReadmeExamples(t *testing.T) {
 		t.Fatalf("%d YAML blocks in the README, want a case and settings", len(blocks)-1)
 	}
 	text := func(block string) []byte { return []byte(block[:strings.Index(block, "```")]) }
-	if _, found := casefile.Read("README.md", text(blocks[1]), casefile.Defaults{}); len(found) > 0 {
-		t.Errorf("case: %v", found)
+	example := string(text(blocks[1]))
+	for heat, want := range map[string]checks.Verdict{"heat: 60 W": checks.Pass, "heat: 120 W": checks.Fail} {
+		f, found := casefile.Read("README.md", []byte(strings.Replace(example, "heat: 60 W", heat, 1)), casefile.Defaults{})
+		if f == nil || len(found) > 0 {
+			t.Fatalf("case: %v", found)
+		}
+		if got := checks.Run(f, thisProgram()).Verdict; got != want {
+			t.Errorf("with %s the example ends in %s, the README says %s", heat, got, want)
+		}
 	}
 	if found := checkSettingsFile("README.md", text(blocks[2])); len(found) > 0 {
 		t.Errorf("settings: %v", found)

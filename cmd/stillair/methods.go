@@ -2,7 +2,6 @@ package main
 
 import (
 	"fmt"
-	"math"
 	"strings"
 
 	"github.com/spf13/cobra"
@@ -25,11 +24,11 @@ func methodList() *listing {
 	l := &listing{what: "method", heads: []string{"id", "used for", "Ra", "scatter", "verification"}}
 	for _, c := range freeconv.All() {
 		l.rows = append(l.rows, listRow{c.ID,
-			[]string{c.ID, kindText(c), ranges(c.RaMin, c.RaMax), scatter(c), string(c.Verification)},
+			[]string{c.ID, kindText(c), tenPowers(c.RaRange()), scatter(c), string(c.Verification)},
 			[][2]string{{"id", c.ID}, {"name", c.Name}, {"used for", kindText(c)}, {"default for", defaultText(c)},
-				{"citation", c.Citation}, {"equation", c.Equation}, {"length", string(c.Length)},
-				{"properties at", propertyText(c)}, {"Ra", ranges(c.RaMin, c.RaMax)}, {"Pr", ranges(c.PrMin, c.PrMax)},
-				{"scatter", scatter(c)}, {"scatter from", c.ScatterNote}, {"verification", string(c.Verification)}, {"notes", c.Note}}})
+				{"citation", c.Citation}, {"equation", plainEquation(c.Equation)}, {"length", string(c.Length)},
+				{"properties at", propertyText(c)}, {"Ra", tenPowers(c.RaRange())}, {"Pr", tenPowers(c.PrRange())},
+				{"scatter", scatter(c)}, {"scatter from", c.ScatterNote}, {"verification", string(c.Verification)}, {"notes", tenPowers(c.Note)}}})
 	}
 	return l
 }
@@ -47,7 +46,7 @@ func defaultText(c *freeconv.Correlation) string {
 	var parts []string
 	for _, k := range c.Kinds {
 		if d, why := freeconv.Default(k); d == c {
-			parts = append(parts, fmt.Sprintf("%s (%s)", k, why))
+			parts = append(parts, fmt.Sprintf("%s (%s)", k, tenPowers(why)))
 		}
 	}
 	return strings.Join(parts, "; ")
@@ -62,19 +61,4 @@ func scatter(c *freeconv.Correlation) string {
 		return "none published"
 	}
 	return fmt.Sprintf("%.3g %%", 100*c.Scatter)
-}
-
-// ranges shows the range of a dimensionless number; open ends stay open.
-func ranges(low, high float64) string {
-	switch {
-	case low == 0 && high == 0:
-		return "not stated"
-	case low <= 0 && math.IsInf(high, 1):
-		return "any"
-	case math.IsInf(high, 1):
-		return fmt.Sprintf("from %.3g", low)
-	case low <= 0:
-		return fmt.Sprintf("up to %.3g", high)
-	}
-	return fmt.Sprintf("%.3g..%.3g", low, high)
 }

@@ -40,9 +40,13 @@ func (a *app) newCommand() *cobra.Command {
 }
 
 func kindList() string {
+	longest := 0
+	for _, name := range starter.Names() {
+		longest = max(longest, len(name))
+	}
 	var b strings.Builder
 	for _, k := range starter.Kinds() {
-		fmt.Fprintf(&b, "  %-11s  %s\n", k.Name, k.About)
+		fmt.Fprintf(&b, "  %-*s  %s\n", longest, k.Name, k.About)
 	}
 	return b.String()
 }

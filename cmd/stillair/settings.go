@@ -108,6 +108,7 @@ func (s setting) word() string {
 // environment, then flags; the later wins. Every value is checked here, so
 // that no command starts with a setting it cannot use.
 func (a *app) loadSettings(flags *pflag.FlagSet) (*settings, error) {
+	a.warnEnvironment()
 	path, text, err := a.settingsFile()
 	if err != nil {
 		return nil, err
@@ -127,6 +128,26 @@ func (a *app) loadSettings(flags *pflag.FlagSet) (*settings, error) {
 		s.from[x.key] = origin(v, x, flags, path)
 	}
 	return s, s.check(path, v)
+}
+
+// warnEnvironment tells about variables that look like settings and are none,
+// since a misspelt one would be without effect and nobody would notice.
+func (a *app) warnEnvironment() {
+	if a.warned {
+		return
+	}
+	a.warned = true
+	var names []string
+	for _, s := range allSettings {
+		names = append(names, s.env())
+	}
+	for _, variable := range os.Environ() {
+		name, value, _ := strings.Cut(variable, "=")
+		upper := strings.ToUpper(name)
+		if value != "" && strings.HasPrefix(upper, envPrefix+"_") && !slices.Contains(names, upper) {
+			fmt.Fprintf(a.err, "stillair: warning: the environment variable %s is no setting and has no effect. %s\n", printable(name), didYouMean(upper, names))
+		}
+	}
 }
 
 // settingsFile finds and reads the settings file. Only one that was asked for

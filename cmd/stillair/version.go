@@ -16,7 +16,10 @@ import (
 	"stillair/radiation"
 )
 
-// version is set by a release build; otherwise the build information tells.
+// release is the number of the version under work. A release build may set
+// version instead; otherwise the build information adds the revision.
+const release = "0.1.0"
+
 var version = ""
 
 func (a *app) versionCommand() *cobra.Command {
@@ -43,10 +46,32 @@ func programVersion() string {
 	if version != "" {
 		return version
 	}
-	if info, ok := debug.ReadBuildInfo(); ok && info.Main.Version != "" {
+	if info, ok := debug.ReadBuildInfo(); ok {
+		return versionFrom(info)
+	}
+	return release
+}
+
+// versionFrom is the release number with the revision it was built from:
+// "0.1.0+0123456789ab,modified". Without version control it is a tagged module
+// version or the release number alone.
+func versionFrom(info *debug.BuildInfo) string {
+	built := map[string]string{}
+	for _, s := range info.Settings {
+		built[s.Key] = s.Value
+	}
+	revision := built["vcs.revision"]
+	switch {
+	case revision != "":
+		text := release + "+" + revision[:min(12, len(revision))]
+		if built["vcs.modified"] == "true" {
+			text += ",modified"
+		}
+		return text
+	case info.Main.Version != "" && info.Main.Version != "(devel)":
 		return info.Main.Version
 	}
-	return "(devel)"
+	return release
 }
 
 // dataVersion is a short hash over the tables and the catalogue of methods: it

@@ -70,39 +70,42 @@ func Version(table string) string {
 	return hex.EncodeToString(sum[:])[:12]
 }
 
-// Find looks an entry up among n, first by id, then by whole name, then by the
-// leading words of its name when only one entry starts with them. The function
-// entry gives the id and the name of an entry. Case, punctuation, extra spaces
-// and American spelling make no difference.
+// Find looks an entry up among n: by its id, by its whole name, or as the only
+// entry whose name holds all the words, in any order. The function entry gives
+// the id and the name of an entry. Case, punctuation, extra spaces and American
+// spelling make no difference.
 func Find(words string, n int, entry func(i int) (id, name string)) (index int, found bool) {
-	want := Normal(words)
-	if want == "" {
-		return 0, false
-	}
-	leading, count := 0, 0
+	names := make([]string, n)
 	for i := range n {
 		id, name := entry(i)
 		if strings.EqualFold(strings.TrimSpace(words), id) {
 			return i, true
 		}
-		if strings.HasPrefix(Normal(name)+" ", want+" ") {
-			leading, count = i, count+1
-		}
+		names[i] = name
 	}
-	if count == 1 {
-		return leading, true
+	want := Normal(words)
+	if i := slices.IndexFunc(names, func(name string) bool { return Normal(name) == want }); i >= 0 && want != "" {
+		return i, true
 	}
-	return whole(want, n, entry)
-}
-
-// whole finds the only entry whose complete name is the wanted one.
-func whole(want string, n int, entry func(i int) (id, name string)) (index int, found bool) {
-	for i := range n {
-		if _, name := entry(i); Normal(name) == want {
-			return i, true
-		}
+	if hold := Holding(words, names); len(hold) == 1 {
+		return slices.Index(names, hold[0]), true
 	}
 	return 0, false
+}
+
+// Holding lists the names that hold all the words, whole and in any order.
+func Holding(words string, names []string) (hold []string) {
+	want := strings.Fields(Normal(words))
+	if len(want) == 0 {
+		return nil
+	}
+	for _, name := range names {
+		has := strings.Fields(Normal(name))
+		if !slices.ContainsFunc(want, func(w string) bool { return !slices.Contains(has, w) }) {
+			hold = append(hold, name)
+		}
+	}
+	return hold
 }
 
 // american lists the spellings that differ from those of the tables.

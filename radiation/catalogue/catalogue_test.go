@@ -1,6 +1,7 @@
 package catalogue_test
 
 import (
+	"slices"
 	"testing"
 
 	"stillair/radiation/catalogue"
@@ -29,16 +30,28 @@ func TestReadFaults(t *testing.T) {
 }
 
 func TestFind(t *testing.T) {
-	entries := [][2]string{{"x1", "steel, rolled"}, {"x2", "steel"}, {"x3", "stone"}, {"stone", "slate, grey"}, {"x5", "wood, soft"}, {"x6", "wood, hard"}}
+	entries := [][2]string{{"x1", "steel, rolled"}, {"x2", "steel"}, {"x3", "stone"}, {"stone", "slate, grey"}, {"x5", "wood, soft"}, {"x6", "wood, hard"},
+		{"x7", "paint-coated metal cladding"}, {"x8", "oil paint, any colour"}, {"x9", "plain carbon steel"}}
 	entry := func(i int) (string, string) { return entries[i][0], entries[i][1] }
 	for words, want := range map[string]int{
 		"X1": 0, "steel rolled": 0, "Steel": 1, "stone": 3, "SLATE": 3, "slate-gray": 3,
-		"wood": -1, "wood hard": 5, "st": -1, "rolled": -1, "": -1,
+		"wood": -1, "wood hard": 5, "hard wood": 5, "st": -1, "rolled": 0, "roll": -1, "rolled stone": -1, "": -1, " - ": -1,
+		"paint": -1, "metal cladding": 6, "cladding, paint coated": 6, "any color paint": 7, "carbon steel": 8, "steel carbon sheet": -1,
 	} {
 		i, ok := catalogue.Find(words, len(entries), entry)
 		if ok != (want >= 0) || ok && i != want {
 			t.Errorf("%q finds %d %v, want %d", words, i, ok, want)
 		}
+	}
+}
+
+func TestHolding(t *testing.T) {
+	names := []string{"oil paint, any colour", "paint-coated metal cladding", "paints, 8 colours"}
+	if got := catalogue.Holding("Paint", names); !slices.Equal(got, names[:2]) {
+		t.Errorf("paint: %q", got)
+	}
+	if got := catalogue.Holding("", names); got != nil {
+		t.Errorf("no word: %q", got)
 	}
 }
 
