@@ -296,3 +296,26 @@ func (o *Outcome) Deciding() (*Judged, *LoadOutcome) {
 	}
 	return best, at
 }
+
+// Place is where a load case is looked at first: the place that decides it; with
+// nothing judged the inside air or the body, and the hottest face where the
+// contents set the temperature inside.
+func (l *LoadOutcome) Place() string {
+	if v := l.Deciding(); v != nil {
+		return v.At
+	}
+	var at *Temp
+	for i := range l.Temps {
+		t := &l.Temps[i]
+		if i == 0 && t.Kind != "contents" {
+			return t.At
+		}
+		if t.Kind == "outer surface" && (at == nil || t.K > at.K) {
+			at = t
+		}
+	}
+	if at == nil {
+		return ""
+	}
+	return at.At
+}

@@ -48,8 +48,8 @@ func (f Finish) TotalEmissivity() bool { return strings.HasPrefix(f.Band, "total
 // Finishes lists the catalogue in the order of its table.
 func Finishes() []Finish { return slices.Clone(finishes()) }
 
-// FindFinish looks a finish up by its id, its name or the leading words of its
-// name when no other finish starts with them. Case, punctuation and extra
+// FindFinish looks a finish up by its id, its name or words of its name
+// that no other finish has all of. Case, punctuation and extra
 // spaces make no difference.
 func FindFinish(name string) (Finish, bool) {
 	all := finishes()

@@ -58,8 +58,8 @@ type Material struct {
 // All lists the catalogue in the order of its table.
 func All() []Material { return slices.Clone(materials()) }
 
-// Find looks a material up by its id, its name or the leading words of its name
-// when no other material starts with them. Case, punctuation and extra spaces
+// Find looks a material up by its id, its name or words of its name that
+// no other material has all of. Case, punctuation and extra spaces
 // make no difference. "steel" alone fits several and is not found.
 func Find(name string) (Material, bool) {
 	all := materials()

@@ -18,6 +18,7 @@ var meaning = map[checks.Verdict]string{
 	checks.ConditionalFail: "a calculated result does not meet its limit, by less than its uncertainty",
 	checks.Fail:            "a calculated result does not meet its limit by more than its uncertainty",
 	checks.None:            "temperatures only, nothing was judged",
+	checks.NotJudged:       "limits are given, but no load case has a purpose that judges one",
 	checks.NoResult:        "at least one load case has no valid result",
 }
 
@@ -31,6 +32,9 @@ func (p *page) head() {
 	p.sayVerdict("", p.o.Verdict, ": "+meaning[p.o.Verdict]+".")
 	if p.o.Governs != "" && len(p.o.Loads) > 1 {
 		p.say("", "Governing load case: "+p.o.Governs+".")
+	}
+	if len(p.o.Unjudged) > 0 {
+		p.say("", "Not judged in any load case: "+strings.Join(p.o.Unjudged, "; ")+".")
 	}
 	if p.opt.Partial != "" {
 		p.say("", p.opt.Partial)
@@ -53,15 +57,14 @@ func (p *page) compare() {
 	g := newGrid(heads...)
 	for i := range p.o.Loads {
 		l := &p.o.Loads[i]
-		v := loadVerdict(l)
-		g.add(p.compareRow(l, v, inside)...)
-		g.paintLast(2, paint(v))
+		g.add(p.compareRow(l, inside)...)
+		g.paintLast(2, paint(l.Verdict))
 	}
 	p.grid(g)
 }
 
-func (p *page) compareRow(l *checks.LoadOutcome, v checks.Verdict, inside bool) []string {
-	row := []string{star(l.Governing), clean(l.Name), verdictWord(v)}
+func (p *page) compareRow(l *checks.LoadOutcome, inside bool) []string {
+	row := []string{star(l.Governing), clean(l.Name), verdictWord(l.Verdict)}
 	if inside {
 		row = append(row, p.tempAt(l, "inside air"))
 	}
@@ -71,7 +74,7 @@ func (p *page) compareRow(l *checks.LoadOutcome, v checks.Verdict, inside bool) 
 		heat = number(p.value(unit.Power, l.HeatW), 1)
 	}
 	row = append(row, hot, at, heat)
-	j := deciding(l)
+	j := l.Deciding()
 	if j == nil {
 		return append(row, "", "")
 	}
@@ -110,40 +113,6 @@ func (p *page) hottest(l *checks.LoadOutcome) (text, at string) {
 	return text, at
 }
 
-// rank orders verdicts from best to worst.
-var rank = map[checks.Verdict]int{
-	checks.None: 0, checks.Pass: 1, checks.ConditionalPass: 2,
-	checks.ConditionalFail: 3, checks.Fail: 4, checks.NoResult: 5,
-}
-
-// loadVerdict is the worst verdict of one load case.
-func loadVerdict(l *checks.LoadOutcome) checks.Verdict {
-	if l.Status != checks.Converged {
-		return checks.NoResult
-	}
-	worst := checks.None
-	for _, j := range l.Verdicts {
-		if rank[j.Verdict] > rank[worst] {
-			worst = j.Verdict
-		}
-	}
-	return worst
-}
-
-// deciding is the check that decides a load case: the worst verdict, then the
-// smallest margin.
-func deciding(l *checks.LoadOutcome) *checks.Judged {
-	var best *checks.Judged
-	for i := range l.Verdicts {
-		j := &l.Verdicts[i]
-		if best == nil || rank[j.Verdict] > rank[best.Verdict] ||
-			rank[j.Verdict] == rank[best.Verdict] && j.MarginK < best.MarginK {
-			best = j
-		}
-	}
-	return best
-}
-
 func star(governs bool) string {
 	if governs {
 		return "*"
@@ -168,8 +137,11 @@ func (p *page) load(l *checks.LoadOutcome) {
 		p.sayVerdict("  ", checks.NoResult, " ("+string(l.Status)+"): "+l.Message)
 		return
 	}
+	p.surface(l)
 	p.temperatures(l)
+	p.loss(l)
 	p.heat(l)
+	p.layers(l)
 	p.films(l)
 	p.checks(l)
 	p.effects(l)
@@ -178,6 +150,56 @@ func (p *page) load(l *checks.LoadOutcome) {
 	for _, n := range l.Notes {
 		p.say("  note: ", n)
 	}
+}
+
+// surface names what the faces radiate and take up the sun with.
+func (p *page) surface(l *checks.LoadOutcome) {
+	b := l.Case.Body
+	if !b.Emissivity.Set {
+		return
+	}
+	text := fmt.Sprintf("emissivity %.3g (%.3g to %.3g)", b.Emissivity.Typical, b.Emissivity.Low, b.Emissivity.High)
+	if b.Finish != "" {
+		text = clean(b.Finish) + ", " + text
+	}
+	if b.Absorb.Set && len(l.Case.Surroundings.Sun) > 0 {
+		text += fmt.Sprintf("; solar absorptance %.3g (%.3g to %.3g)", b.Absorb.Typical, b.Absorb.Low, b.Absorb.High)
+	}
+	p.say("  surface: ", text)
+}
+
+// loss is the heat that leaves the body, with its uncertainty.
+func (p *page) loss(l *checks.LoadOutcome) {
+	if l.Status != checks.Converged {
+		return
+	}
+	w := func(v float64) string { return number(p.value(unit.Power, v), 1) }
+	text := fmt.Sprintf("%s %s (- %s, + %s)", w(l.HeatW), p.unit(unit.Power), w(l.HeatMinusW), w(l.HeatPlusW))
+	if l.HeatPerM != 0 {
+		text += ", that is " + p.opt.Units.Show(unit.HeatPerLength, l.HeatPerM, 1)
+	}
+	p.say("  heat shed: ", text)
+}
+
+// layers shows the conduction through walls and layers of a lagged body, or of
+// any body when everything is wanted.
+func (p *page) layers(l *checks.LoadOutcome) {
+	lagged := slices.ContainsFunc(l.Layers, func(y checks.LayerRow) bool { return y.Place != "wall" })
+	if !lagged && !(p.opt.Verbose && len(l.Layers) > 0) {
+		return
+	}
+	p.heading("  Wall and layers")
+	t := p.unit(unit.Temperature)
+	g := newGrid("at", "layer", ".t "+p.unit(unit.Length), ".k "+p.unit(unit.Conductivity), ".inside "+t, ".outside "+t, "material", "range")
+	for _, y := range l.Layers {
+		inRange := "within"
+		if !y.InRange {
+			inRange = "OUTSIDE"
+		}
+		g.add(clean(y.At), y.Place, number(p.value(unit.Length, y.ThicknessM), 1), number(p.value(unit.Conductivity, y.K), 4),
+			number(p.value(unit.Temperature, y.InnerK), 1), number(p.value(unit.Temperature, y.OuterK), 1), clean(y.Material), inRange)
+	}
+	p.grid(g)
 }
 
 func (p *page) temperatures(l *checks.LoadOutcome) {
@@ -250,7 +272,7 @@ func (p *page) films(l *checks.LoadOutcome) {
 func (p *page) checks(l *checks.LoadOutcome) {
 	if len(l.Verdicts) == 0 {
 		p.heading("  Checks")
-		p.line("  no limit applies to this load case")
+		p.line("  %s", l.Verdict)
 		return
 	}
 	d := p.checkDecimals(l)
@@ -337,7 +359,7 @@ func (p *page) steps(l *checks.LoadOutcome) {
 // effects shows what moves the governing temperature most.
 func (p *page) effects(l *checks.LoadOutcome) {
 	rows := slices.Clone(l.Effects)
-	at := governingAt(l)
+	at := l.Place()
 	if !p.opt.Verbose {
 		rows = slices.DeleteFunc(rows, func(e checks.Effect) bool { return e.At != at })
 	}
@@ -362,17 +384,6 @@ func (p *page) effects(l *checks.LoadOutcome) {
 
 func size(e checks.Effect) float64 { return math.Max(math.Abs(e.UpK), math.Abs(e.DownK)) }
 
-// governingAt is the temperature that decides the load case, or the first one.
-func governingAt(l *checks.LoadOutcome) string {
-	if j := deciding(l); j != nil {
-		return j.At
-	}
-	if len(l.Effects) > 0 {
-		return l.Effects[0].At
-	}
-	return ""
-}
-
 // second compares with the other set of published correlations.
 func (p *page) second(l *checks.LoadOutcome) {
 	s := l.Second
@@ -388,7 +399,7 @@ func (p *page) second(l *checks.LoadOutcome) {
 	t, k := p.unit(unit.Temperature), p.unit(unit.TemperatureDifference)
 	g := newGrid("at", ".first "+t, ".second "+t, ".difference "+k)
 	for _, r := range s.Rows {
-		if !p.opt.Verbose && r.At != governingAt(l) {
+		if !p.opt.Verbose && r.At != l.Place() {
 			continue
 		}
 		g.add(clean(r.At), number(p.value(unit.Temperature, r.FirstK), 1), number(p.value(unit.Temperature, r.K), 1),
@@ -399,18 +410,26 @@ func (p *page) second(l *checks.LoadOutcome) {
 	}
 }
 
+// times counts iterations in words.
+func times(n int) string {
+	if n == 1 {
+		return "1 iteration"
+	}
+	return fmt.Sprintf("%d iterations", n)
+}
+
 // solution says how the balance was solved and how well it closes.
 func (p *page) solution(l *checks.LoadOutcome) {
 	p.heading("  Solution")
-	p.say("  ", fmt.Sprintf("%s in %d iterations; largest heat left over at any point %s W; air pressure %s",
-		l.Status, l.Iterations, power(l.ClosureW), p.opt.Units.Show(unit.Pressure, l.PressurePa, 2)))
+	p.say("  ", fmt.Sprintf("%s in %s; largest heat left over at any point %s W; air pressure %s",
+		l.Status, times(l.Iterations), power(l.ClosureW), p.opt.Units.Show(unit.Pressure, l.PressurePa, 2)))
 	if c := l.CrossCheck; c.Iterations > 0 {
 		agree := "agrees"
 		if !c.Agrees {
 			agree = "DOES NOT AGREE"
 		}
-		p.say("  ", fmt.Sprintf("plain damped substitution %s: largest difference %s K after %d iterations",
-			agree, power(c.MaxDiffK), c.Iterations))
+		p.say("  ", fmt.Sprintf("plain damped substitution %s: largest difference %s K after %s",
+			agree, power(c.MaxDiffK), times(c.Iterations)))
 	}
 	if l.DewPointK > 0 {
 		p.say("  ", "dew point "+p.opt.Units.Show(unit.Temperature, l.DewPointK, 1))
@@ -452,7 +471,7 @@ func (p *page) cautions() {
 	if len(p.o.Cautions) == 0 {
 		return
 	}
-	p.heading("Cautions: a burn threshold or touch limit was judged")
+	p.heading("Cautions: a surface that can be touched was judged")
 	shown := p.o.Cautions
 	if !p.opt.Verbose && len(shown) > 3 {
 		shown = shown[:3]
