@@ -73,6 +73,10 @@ func (m *model) owners() map[int]string {
 	return own
 }
 
+// idleStep is the temperature step over a layer, K, below which its
+// conductivity has no bearing on any result.
+const idleStep = 0.05
+
 // layers lists the conduction through every layer, face by face from the
 // inside out.
 func (m *model) layers(s balance.Solution) []LayerRow {
@@ -85,7 +89,7 @@ func (m *model) layers(s balance.Solution) []LayerRow {
 			rows = append(rows, LayerRow{
 				At: f.part.Face.Name, Place: k.place(), Material: k.name, ThicknessM: slab.Thickness, FactorM: slab.Factor(),
 				K: k.mean(t1, t2) * factor(m.t.conductivity, k.index), InnerK: t1, OuterK: t2, W: s.Heat[link+i],
-				InRange: k.mat == nil || k.mat.InRange(t1, t2), Solid: k.mat,
+				InRange: k.mat == nil || k.mat.InRange(t1, t2) || math.Abs(t1-t2) < idleStep, Solid: k.mat,
 				AreaM2: slab.Area, LengthM: slab.Length, InnerM: slab.Inner, OuterM: slab.Outer,
 			})
 		}

@@ -164,6 +164,10 @@ func (m *model) remarks(l LoadOutcome) []string {
 // it was used.
 func outsideTable(y LayerRow) string {
 	p := y.Solid.Points
+	if len(p) == 1 {
+		return fmt.Sprintf("%s: the conductivity of %s is published at %.0f °C only and used from %.0f °C to %.0f °C",
+			y.At, y.Material, p[0].T-zeroCelsius, y.OuterK-zeroCelsius, y.InnerK-zeroCelsius)
+	}
 	return fmt.Sprintf("%s: the conductivity of %s is published for %.0f °C to %.0f °C and used from %.0f °C to %.0f °C; beyond its hot end a rising table is carried on with its last slope",
 		y.At, y.Material, p[0].T-zeroCelsius, p[len(p)-1].T-zeroCelsius, y.OuterK-zeroCelsius, y.InnerK-zeroCelsius)
 }

@@ -181,6 +181,14 @@ func (p *page) loss(l *checks.LoadOutcome) {
 	p.say("  heat shed: ", text)
 }
 
+// conductivity has the decimals its size asks for.
+func conductivity(k float64) string {
+	if k >= 1 {
+		return number(k, 1)
+	}
+	return number(k, 4)
+}
+
 // layers shows the conduction through walls and layers of a lagged body, or of
 // any body when everything is wanted.
 func (p *page) layers(l *checks.LoadOutcome) {
@@ -196,7 +204,7 @@ func (p *page) layers(l *checks.LoadOutcome) {
 		if !y.InRange {
 			inRange = "OUTSIDE"
 		}
-		g.add(clean(y.At), y.Place, number(p.value(unit.Length, y.ThicknessM), 1), number(p.value(unit.Conductivity, y.K), 4),
+		g.add(clean(y.At), y.Place, number(p.value(unit.Length, y.ThicknessM), 1), conductivity(p.value(unit.Conductivity, y.K)),
 			number(p.value(unit.Temperature, y.InnerK), 1), number(p.value(unit.Temperature, y.OuterK), 1), clean(y.Material), inRange)
 	}
 	p.grid(g)
