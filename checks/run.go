@@ -178,7 +178,7 @@ const zeroCelsius = 273.15
 // secondMethod solves the same balance with another published correlation for
 // every kind of face.
 func secondMethod(m *model, l LoadOutcome) *SecondMethod {
-	n := compile(m.c, otherChoice(l.Films), tuning{})
+	n := compile(m.c, otherChoice(m.choice), tuning{})
 	s := n.b.Solve()
 	second := &SecondMethod{Status: Status(s.Status), Methods: []string{}, Rows: []SecondRow{}, Films: []FilmRow{}, Verdicts: []SecondVerdict{}}
 	if s.Status != balance.Converged {
@@ -202,18 +202,16 @@ func secondMethod(m *model, l LoadOutcome) *SecondMethod {
 	return second
 }
 
-// otherChoice picks, for every situation met, the published alternative, or the
-// default where the first calculation already used the alternative.
-func otherChoice(films []FilmRow) freeconv.Choice {
+// otherChoice picks, for every situation, the published alternative, or the
+// default where the first calculation was asked to use the alternative.
+func otherChoice(first freeconv.Choice) freeconv.Choice {
 	choice := freeconv.Choice{}
-	for _, f := range films {
-		for _, kind := range f.Film.Method.Kinds {
-			other := freeconv.Alternative(kind)
-			if other == nil || other.ID == f.MethodID {
-				other, _ = freeconv.Default(kind)
-			}
-			choice[kind] = other.ID
+	for _, kind := range freeconv.Kinds() {
+		other := freeconv.Alternative(kind)
+		if first[kind] == other.ID {
+			other, _ = freeconv.Default(kind)
 		}
+		choice[kind] = other.ID
 	}
 	return choice
 }

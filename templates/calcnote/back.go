@@ -5,6 +5,7 @@ import (
 	"crypto/sha256"
 	"encoding/hex"
 	"fmt"
+	"path"
 	"slices"
 	"strings"
 
@@ -23,18 +24,31 @@ func (n *note) cautions() {
 		"Temperatures are means over faces; parts above components, at edges and at joints are hotter.",
 		"Verify by measurement before relying on the result.",
 	}
-	if len(n.o.Cautions) == 0 {
+	switch {
+	case len(n.o.Cautions) == 0:
 		general = append(general, "No touch limit was judged: the note says nothing about burns on contact.")
+	case !n.burnJudged():
+		general = append(general, noBurnThreshold+" What follows is for readers who compare with one.")
 	}
 	for _, s := range general {
 		n.bullet(s)
 	}
 	if len(n.o.Cautions) > 0 {
 		n.part("Touch and burn data", 20)
-		for _, s := range n.o.Cautions {
+		for _, s := range n.cautionList() {
 			n.bullet(s)
 		}
 	}
+}
+
+// cautionList leaves out what tells about thresholds that were not used.
+func (n *note) cautionList() []string {
+	if n.burnJudged() {
+		return n.o.Cautions
+	}
+	return slices.DeleteFunc(slices.Clone(n.o.Cautions), func(s string) bool {
+		return strings.HasPrefix(s, "The lower edge of each threshold band") || strings.HasPrefix(s, "The result compares")
+	})
 }
 
 // review is the list a reviewer works through.
@@ -51,12 +65,11 @@ func (n *note) review() {
 	if len(n.o.Assumed) == 0 {
 		return
 	}
-	n.part("Values nobody typed", 20)
 	var rows []pdf.Row
 	for _, in := range n.o.Assumed {
-		rows = append(rows, cells("☐", in.Label, in.Typed, in.SI, in.Source))
+		rows = append(rows, cells("☐", in.Label, in.Typed, siOf(in), n.refs.sourceMark(in.Source)))
 	}
-	n.table([]pdf.Column{{Head: "", Width: 6}, {Head: "Input", Width: 58}, {Head: "Taken as", Width: 34}, {Head: "SI value", Width: 28}, {Head: "Source", Width: 44}}, rows)
+	n.partTable("Values taken by default", "", []pdf.Column{{Head: "", Width: 6}, {Head: "Input", Width: 50}, {Head: "Taken as", Width: 26}, {Head: "SI value", Width: 24}, {Head: "Source", Width: 64}}, rows)
 }
 
 // identification says which program and data made the note, from what.
@@ -72,11 +85,16 @@ func (n *note) identification() {
 		cells("Results, SHA-256", hex.EncodeToString(sum[:])),
 	}
 	if n.o.File != nil {
-		rows = append(rows, cells("Case file", n.o.File.Name), cells("Attachments", caseAttachment+" (the case file, byte for byte), "+resultAttachment+" (all results)"))
+		rows = append(rows, cells("Case file", baseName(n.o.File.Name)), cells("Attachments", caseAttachment+" (the case file, byte for byte), "+resultAttachment+" (all results)"))
 	}
 	n.table([]pdf.Column{{Head: "What", Width: 40}, {Head: "Which", Width: 130}}, rows)
 	n.text("A reader who recomputes the SHA-256 of the attached case file and finds another value holds an edited copy. The numbers on paper can be rebuilt from the attached case file with the program version named.")
 	n.replaced()
+}
+
+// baseName is the name of a file without its folders.
+func baseName(name string) string {
+	return path.Base(strings.ReplaceAll(name, `\`, "/"))
 }
 
 // replaced reports characters of the case that the fonts cannot print.
@@ -118,23 +136,52 @@ func (n *note) listing() {
 		return
 	}
 	d := n.d
-	d.Y += 1
-	lead := monoStyle.Em() * 1.32
 	char := d.TextWidth("0", monoStyle)
 	perLine := int((n.width() - 12) / char)
+	var lines [][2]string
 	for i, line := range bytes.Split(bytes.TrimRight(n.o.File.Text, "\r\n"), []byte("\n")) {
 		rest := []rune(strings.ReplaceAll(strings.TrimRight(string(line), "\r"), "\t", "    "))
 		number := fmt.Sprint(i + 1)
 		for first := true; first || len(rest) > 0; first = false {
-			d.Need(lead)
 			part := rest[:listingBreak(rest, perLine)]
 			rest = rest[len(part):]
-			d.TextRight(n.left()+8, d.Y+0.8*lead, number, labelStyle)
-			d.Text(n.left()+12, d.Y+0.8*lead, string(part), monoStyle)
-			d.Y += lead
+			lines = append(lines, [2]string{number, string(part)})
 			number = "↪"
 		}
 	}
+	n.listingLines(lines)
+}
+
+func (n *note) listingLines(lines [][2]string) {
+	d := n.d
+	lead := monoStyle.Em() * n.listingLead(len(lines))
+	for _, l := range lines {
+		d.Need(lead)
+		d.TextRight(n.left()+8, d.Y+0.8*lead, l[0], labelStyle)
+		d.Text(n.left()+12, d.Y+0.8*lead, l[1], monoStyle)
+		d.Y += lead
+	}
+}
+
+// listingLead is the distance of lines in em: the nearest to the usual one that
+// does not leave a last page with a few lines only.
+func (n *note) listingLead(lines int) float64 {
+	const usual, few = 132, 12 // hundredths of an em, lines
+	d := n.d
+	good := func(hundredths int) bool {
+		h := monoStyle.Em() * float64(hundredths) / 100
+		rest, page := lines-int((d.Bottom()-d.Y)/h), int((d.Bottom()-d.Top())/h)
+		return rest <= 0 || rest%page == 0 || rest%page >= few
+	}
+	for step := 0; step <= 34; step += 2 {
+		switch {
+		case step <= 22 && good(usual-step):
+			return float64(usual-step) / 100
+		case good(usual + step):
+			return float64(usual+step) / 100
+		}
+	}
+	return float64(usual) / 100
 }
 
 // listingBreak is how many characters go on a line: all, or up to the last

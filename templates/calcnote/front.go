@@ -166,7 +166,7 @@ func (n *note) titleRow() {
 	d.Y = y + 1.6
 }
 
-const fieldHeight = 10.6
+const fieldHeight = 9.8
 
 func (n *note) fieldRow(fields []field) {
 	d := n.d
@@ -184,8 +184,8 @@ func (n *note) fieldRow(fields []field) {
 		if strings.TrimSpace(f.value) == "" {
 			n.emptyField(x, d.Y, w, fieldHeight)
 		}
-		d.Text(x+1.5, d.Y+4, f.label, labelStyle)
-		d.Text(x+1.5, d.Y+8.8, d.Fit(f.value, bodyStyle, w-3), bodyStyle)
+		d.Text(x+1.5, d.Y+3.7, f.label, labelStyle)
+		d.Text(x+1.5, d.Y+8.2, d.Fit(f.value, bodyStyle, w-3), bodyStyle)
 		x += w
 	}
 	d.Y += fieldHeight
@@ -200,7 +200,7 @@ func (n *note) emptyField(x, y, w, h float64) {
 // verdictPanel tells the result, and what it rests on, in the first half page.
 func (n *note) verdictPanel() {
 	d := n.d
-	d.Y += 4
+	d.Y += 3
 	top, page := d.Y, d.Page()
 	d.Y += 2.5
 	x := n.left() + 4
@@ -212,11 +212,15 @@ func (n *note) verdictPanel() {
 	d.TextRight(x+w, d.Y+5.6, n.tally(), labelStyle)
 	d.Y += 9
 	for _, s := range n.verdictSentences() {
-		d.Para(pdf.T(s), bodyStyle, x, w)
-		d.Y += 0.8
+		d.Para(prose(s), bodyStyle, x, w)
+		d.Y += 0.6
+	}
+	if s := n.unjudged(); s != "" {
+		d.Para(pdf.T(s), boldStyle, x, w)
+		d.Y += 0.6
 	}
 	if len(n.o.Cautions) > 0 {
-		d.Y += 0.8
+		d.Y += 0.4
 		d.Para(append([]pdf.Run{{Text: "Burn caution. ", Face: pdf.Bold}}, n.burnCaution()...), smallStyle, x, w)
 	}
 	d.Y += 2
@@ -226,11 +230,15 @@ func (n *note) verdictPanel() {
 	d.Y += 1
 }
 
-// burnCaution points to the section with the cautions.
+// burnCaution says what the comparison leaves out and points to the section
+// with the cautions.
 func (n *note) burnCaution() []pdf.Run {
 	key, number := n.sectionOf(cautionsTitle)
-	return []pdf.Run{{Text: "Burn thresholds hold for short contact of a small area of healthy skin; pain and a startled movement begin lower. Local hot spots are hotter than the mean of a face. " +
-		limit.CautionHead + " See "},
+	about := "Burn thresholds hold for short contact of a small area of healthy skin; pain and a startled movement begin lower."
+	if !n.burnJudged() {
+		about = noBurnThreshold
+	}
+	return []pdf.Run{{Text: about + " Local hot spots are hotter than the mean of a face. " + limit.CautionHead + " See "},
 		{Text: "section\u00A0" + number, Link: key}, {Text: "."}}
 }
 
@@ -273,14 +281,22 @@ func (n *note) verdictSentences() []string {
 			list = append(list, fmt.Sprintf("Load case “%s” has no valid result (%s). %s", l.Name, l.Status, capital(l.Message)))
 		}
 	}
-	v, load := n.decisive()
+	v, load := n.o.Deciding()
 	if v == nil {
 		if n.converged() {
-			list = append(list, "No limit was judged: the note reports temperatures only.")
+			list = append(list, nothingJudged(n.o.Verdict))
 		}
 		return list
 	}
-	return append(list, n.decisiveSentence(*v, load))
+	return append(list, n.decisiveSentence(*v, load.Name))
+}
+
+// nothingJudged tells why there is no verdict.
+func nothingJudged(v checks.Verdict) string {
+	if v == checks.NotJudged {
+		return "Limits are given, but no load case has a purpose that judges one: the note reports temperatures only."
+	}
+	return "No limit is given: the note reports temperatures only."
 }
 
 func (n *note) decisiveSentence(v checks.Judged, load string) string {
@@ -288,10 +304,19 @@ func (n *note) decisiveSentence(v checks.Judged, load string) string {
 		meaning[v.Verdict], load, v.At, n.pm(v.ValueK, v.Uncertainty), n.limitText(v), shortSource(v.Source), n.diff(v.MarginK))
 }
 
+// unjudged names the limits that no load case judged.
+func (n *note) unjudged() string {
+	if len(n.o.Unjudged) == 0 {
+		return ""
+	}
+	return minus(fmt.Sprintf("Not judged in any load case: %s.", strings.Join(n.o.Unjudged, "; ")))
+}
+
 // shortSource is the head of a long citation; the whole stands in the
 // references.
 func shortSource(s string) string {
 	const enough = 90
+	s = tidySource(s)
 	if r := []rune(s); len(r) > enough {
 		head, _, _ := strings.Cut(s, "; ")
 		if r = []rune(head); len(r) > enough {
@@ -305,10 +330,10 @@ func shortSource(s string) string {
 // limitText is a limit in words with its value when the words do not have it.
 func (n *note) limitText(v checks.Judged) string {
 	value := n.temp(v.LimitK)
-	if strings.Contains(squash(v.Limit), squash(strings.TrimSuffix(value, " "))) {
-		return v.Limit
+	if strings.Contains(squash(minus(v.Limit)), squash(strings.TrimSuffix(value, " "))) {
+		return minus(v.Limit)
 	}
-	return v.Limit + " = " + value
+	return minus(v.Limit) + " = " + value
 }
 
 func squash(s string) string {
@@ -321,28 +346,10 @@ var meaning = map[checks.Verdict]string{
 	checks.ConditionalPass: "The calculated results meet every limit, but at least one not with its whole uncertainty.",
 	checks.ConditionalFail: "At least one calculated result does not meet its limit; the excess is smaller than its uncertainty.",
 	checks.Fail:            "At least one calculated result does not meet its limit.",
-	checks.None:            "No limit was judged.",
+	checks.None:            "No limit is given.",
+	checks.NotJudged:       "No limit was judged.",
 	checks.NoResult:        "At least one load case has no valid result, so there is no verdict.",
 }
-
-// decisive is the judged row behind the verdict: the worst word, then the
-// smallest margin.
-func (n *note) decisive() (*checks.Judged, string) {
-	var best *checks.Judged
-	load := ""
-	for i := range n.o.Loads {
-		l := &n.o.Loads[i]
-		for j := range l.Verdicts {
-			v := &l.Verdicts[j]
-			if best == nil || rank[v.Verdict] > rank[best.Verdict] || rank[v.Verdict] == rank[best.Verdict] && v.MarginK < best.MarginK {
-				best, load = v, l.Name
-			}
-		}
-	}
-	return best, load
-}
-
-var rank = map[checks.Verdict]int{checks.Pass: 1, checks.ConditionalPass: 2, checks.ConditionalFail: 3, checks.Fail: 4}
 
 // signOff is the table that people sign in ink.
 func (n *note) signOff() {
@@ -379,7 +386,7 @@ func (n *note) signOff() {
 
 func (n *note) revisions() {
 	h := n.head()
-	n.d.Y += 3
+	n.d.Y += 2
 	n.table([]pdf.Column{{Head: "Revision", Width: 18}, {Head: "Date", Width: 26}, {Head: "Reason", Width: 84}, {Head: "Prepared by", Width: 42}},
 		[]pdf.Row{cells(dash(h.Revision), dash(h.Date), orNone(h.Reason), dash(h.Prepared))})
 }
@@ -394,9 +401,9 @@ func (n *note) contents() {
 		}
 	}
 	half := (len(list) + 1) / 2
-	lead := 4.9
-	d.Need(8 + float64(half)*lead)
-	d.Y += 4
+	lead := 4.6
+	d.Need(14 + float64(half)*lead)
+	d.Y += 2.5
 	d.Text(n.left(), d.Y, "Contents", boldStyle)
 	d.Y += 2
 	top, w := d.Y, (n.width()-8)/2
@@ -414,7 +421,7 @@ func (n *note) contents() {
 		d.Line(x+11+d.TextWidth(title, bodyStyle), y, x+w-2-d.TextWidth(page, bodyStyle), y, 0.1, hair)
 		d.LinkTo(a.Key, x, y-3.6, w, lead)
 	}
-	d.Y = top + float64(half)*lead + 3
+	d.Y = top + float64(half)*lead + 2
 	d.Para(pdf.T(n.conventions()), smallStyle, n.left(), n.width())
 }
 
@@ -423,14 +430,13 @@ func (n *note) conventions() string {
 	if n.sys == unit.US {
 		s = "Results in US customary units, worked surfaces in SI units"
 	}
-	return s + "; decimal point; groups of three digits set apart by a thin space; U is about two standard deviations."
+	return s + "; decimal point; groups of three digits set apart by a thin space; ± U is about two standard deviations, rounded up."
 }
 
 // glanceRows is how many load cases fit on the first page.
 const glanceRows = 6
 
-// glance is one line per load case: the body, its hottest face, the worst
-// verdict.
+// glance is one line per load case: the body, its hottest face, the verdict.
 func (n *note) glance() {
 	if len(n.o.Loads) > glanceRows {
 		return
@@ -440,15 +446,6 @@ func (n *note) glance() {
 	var rows []pdf.Row
 	for _, l := range n.o.Loads {
 		row := cells(l.Name, notComputed, notComputed, "")
-		worst := checks.None
-		if l.Status != checks.Converged {
-			worst = checks.NoResult
-		}
-		for _, v := range l.Verdicts {
-			if rank[v.Verdict] > rank[worst] {
-				worst = v.Verdict
-			}
-		}
 		if len(l.Temps) > 0 && l.Status == checks.Converged {
 			core = capital(l.Temps[0].At)
 			row.Cells[1] = pdf.C(n.pm(l.Temps[0].K, uncertaintyOf(l.Temps[0])))
@@ -456,10 +453,10 @@ func (n *note) glance() {
 				row.Cells[2] = pdf.C(t.At + " " + n.pm(t.K, uncertaintyOf(t)))
 			}
 		}
-		row.Cells[3] = pdf.Cell{Runs: verdictRuns(worst)}
+		row.Cells[3] = pdf.Cell{Runs: verdictRuns(l.Verdict)}
 		rows = append(rows, n.markGoverning(row, l.Governing))
 	}
-	n.table([]pdf.Column{{Head: "Load case", Width: 50}, {Head: core, Width: 34}, {Head: "Hottest face", Width: 50}, {Head: "Worst verdict", Width: 36}}, rows)
+	n.table([]pdf.Column{{Head: "Load case", Width: 50}, {Head: core, Width: 34}, {Head: "Hottest face", Width: 50}, {Head: "Verdict", Width: 36}}, rows)
 }
 
 func hottestFace(l checks.LoadOutcome) (hot checks.Temp, found bool) {

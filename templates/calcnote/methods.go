@@ -6,7 +6,6 @@ import (
 	"strings"
 
 	"stillair/checks"
-	"stillair/checks/limit"
 	"stillair/freeconv"
 	"stillair/freeconv/fluid"
 	"stillair/templates/pdf"
@@ -20,41 +19,78 @@ const (
 	formulaRadiation  = `Q_\mathrm{r} = \varepsilon\,\sigma\,A \left(T_\mathrm{s}^4 - T_\mathrm{r}^4\right), \quad \sigma = 5.670374 \times 10^{-8}\ \mathrm{W/(m²·K⁴)}`
 	formulaSun        = `Q_\mathrm{s} = \alpha_\mathrm{s}\,G\,A`
 	formulaPlane      = `Q_\mathrm{k} = \bar{k}\,S \left(T_1 - T_2\right), \quad S = \frac{A}{t}`
-	formulaCylinder   = `Q_\mathrm{k} = \bar{k}\,S \left(T_1 - T_2\right), \quad S = \frac{2 \pi L}{\ln\left(r_2/r_1\right)}`
+	formulaCylinder   = `Q_\mathrm{k} = \bar{k}\,S \left(T_1 - T_2\right), \quad S = \frac{2 \pi\,\ell}{\ln\left(r_2/r_1\right)}`
 	formulaSphere     = `Q_\mathrm{k} = \bar{k}\,S \left(T_1 - T_2\right), \quad S = \frac{4 \pi\,r_1 r_2}{r_2 - r_1}`
 	formulaBalance    = `\sum Q_\mathrm{in} = \sum Q_\mathrm{out}`
 	formulaUpper      = `T_\mathrm{upper} = T_\mathrm{a} + f \left(T_\mathrm{inside} - T_\mathrm{a}\right)`
+	formulaPressure   = `H = \frac{6356766\,z}{6356766 + z}, \quad T_H = 288.15 - 0.0065\,H, \quad p = 101325 \left(\frac{T_H}{288.15}\right)^{5.25588}`
 	formulaCombine    = `U_{+} = \sqrt{\sum_i \max\left(0, \Delta_i\right)^2}, \quad U_{-} = \sqrt{\sum_i \min\left(0, \Delta_i\right)^2}`
 )
 
-// methods explains the model: its equations, and each correlation in use.
+// methods explains the model: its symbols, its equations, and each correlation
+// in use.
 func (n *note) methods() {
-	n.section("Methods")
+	n.sectionRoom("Methods", 46)
+	n.symbols()
 	n.balanceEquations()
-	n.part("Correlations in use", 66)
-	for _, u := range n.used() {
+	n.part("Correlations in use", 46)
+	var films []checks.FilmRow
+	for _, l := range n.o.Loads {
+		films = append(films, l.Films...)
+	}
+	for _, u := range used(films, n.asked()) {
 		n.correlation(u)
 	}
 	n.part("Air", 30)
 	n.cited("Properties of dry air at the property temperature and the pressure stated: density ρ, specific heat, viscosity μ and conductivity k from published equations; the others follow from them.", fluid.Air.Sources()...)
 	n.formula(formulaProperties)
-	if !n.pressureTyped() {
-		n.cited("The pressure follows from the altitude.", atmosphere)
+	n.pressure()
+}
+
+// pressure tells how the pressure follows from the altitude.
+func (n *note) pressure() {
+	altitudes := n.altitudes()
+	if len(altitudes) == 0 {
+		return
+	}
+	if len(altitudes) == 1 && altitudes[0] == 0 {
+		n.cited("At sea level the pressure is 101.325 kPa.", atmosphere)
+		return
+	}
+	n.text("The pressure p in Pa follows from the altitude z, both lengths in m and T in K:")
+	n.formula(formulaPressure, atmosphere)
+	for _, z := range altitudes {
+		for _, line := range pressureLines(z) {
+			n.display(line, "")
+		}
 	}
 }
 
-func (n *note) pressureTyped() bool {
+// altitudes lists the altitudes, m, of the load cases that take their pressure
+// from one.
+func (n *note) altitudes() []float64 {
+	var list []float64
 	for _, l := range n.o.Loads {
-		if !l.Case.Surroundings.Pressure.Set {
-			return false
+		if s := l.Case.Surroundings; !s.Pressure.Set && !slices.Contains(list, s.Altitude.SI) {
+			list = append(list, s.Altitude.SI)
 		}
 	}
-	return true
+	return list
+}
+
+// pressureLines is the standard atmosphere with numbers in it.
+func pressureLines(z float64) []string {
+	t := fluid.StandardTemperature(z)
+	h := (288.15 - t) / 0.0065
+	return []string{
+		fmt.Sprintf(`H = \frac{6356766 \times %[1]s}{6356766 + %[1]s} = %[2]s\ \mathrm{m}, \quad T_H = 288.15 - 0.0065 \times %[2]s = %.3[3]f\ \mathrm{K}`, signed(z), signed(h), t),
+		fmt.Sprintf(`p = 101325 \times \left(\frac{%.3f}{288.15}\right)^{5.25588} = %s\ \mathrm{Pa}`, t, digits(fluid.StandardPressure(z), 6)),
+	}
 }
 
 func (n *note) balanceEquations() {
 	c := n.o.Loads[0].Case
-	n.part("Heat balance", 30)
+	n.part("Heat balance", 24)
 	n.text("The body is a network of temperatures joined by heat flows. In the steady state the heat that reaches each unknown temperature leaves it again:")
 	n.formula(formulaBalance)
 	n.runs(pdf.Run{Text: "Free convection on a face at its mean temperature, with the characteristic length "}, inline(`L`), pdf.Run{Text: " and the property temperature of its correlation:"})
@@ -67,15 +103,35 @@ func (n *note) balanceEquations() {
 		n.formula(formulaSun)
 	}
 	if b := c.Body; b.Wall != nil || len(b.Layers) > 0 {
-		n.text("Conduction through a layer with the mean conductivity between its two sides:")
-		n.formula(conductionFormula(b.Kind), fourierSource)
+		n.conductionEquations(b.Kind)
 	}
 	if c.Body.Kind == "box" {
 		n.textf("Upper zone of the inside air, with the assumed factor f = %s:", orNone(c.Inside.UpperZone.Typed))
 		n.formula(formulaUpper)
 	}
-	n.text("Uncertainty: each input is shifted by about two standard deviations both ways and the balance solved anew; the changes Δ of a temperature are combined as the root of the sum of squares, apart for those that warm and those that cool it:")
+	n.uncertaintyEquations()
+}
+
+func (n *note) conductionEquations(kind string) {
+	text := "Conduction through a layer with the mean conductivity between its two sides"
+	switch kind {
+	case "pipe", "sphere":
+		text += ":"
+	case "cylinder", "vessel":
+		text += "; in plane layers A is the mean of the inner and the outer area:"
+	default:
+		text += "; A is the mean of the inner and the outer area of the layer:"
+	}
+	n.text(text)
+	n.formula(conductionFormula(kind), fourierSource)
+}
+
+// uncertaintyEquations define U and how it is printed and used.
+func (n *note) uncertaintyEquations() {
+	n.text("Uncertainty: each input is shifted by about two standard deviations both ways and the balance solved anew. The changes Δ of a temperature are combined as the root of the sum of squares, those that warm it into one value and those that cool it into another:")
 	n.formula(formulaCombine, gumSource)
+	n.runs(append([]pdf.Run{{Text: "Every U is printed rounded up to two significant digits. Where one U is printed, it is the larger of "}, inline(`U_{+}`), {Text: " and "}, inline(`U_{-}`)},
+		pdf.T(". A check takes the one on the side of its limit; for a limit that moves with the air (a rise, the dew point) without the uncertainty of the air, and for the dew point with that of the humidity. Probabilities are computed with the unrounded U.")...)...)
 }
 
 func conductionFormula(kind string) string {
@@ -90,39 +146,95 @@ func conductionFormula(kind string) string {
 	return formulaPlane
 }
 
+// asked are the correlations asked for by name; never nil.
+func (n *note) asked() map[string]string {
+	if m := n.o.Loads[0].Case.Methods; m != nil {
+		return m
+	}
+	return map[string]string{}
+}
+
 // usage is one correlation and where it was used.
 type usage struct {
 	method *freeconv.Correlation
-	why    string
+	whys   []string
 	places []string
 }
 
-// used lists the correlations of all load cases in the order they appear, the
-// rules that chose them included.
-func (n *note) used() []*usage {
-	var list []*usage
-	add := func(m *freeconv.Correlation, why, place string) {
-		i := slices.IndexFunc(list, func(u *usage) bool { return u.method == m })
-		if i < 0 {
-			list = append(list, &usage{method: m, why: why})
-			i = len(list) - 1
-		}
-		if !slices.Contains(list[i].places, place) {
-			list[i].places = append(list[i].places, place)
-		}
+// usages collects correlations in the order they appear.
+type usages []*usage
+
+func (list *usages) add(m *freeconv.Correlation, why, place string) {
+	i := slices.IndexFunc(*list, func(u *usage) bool { return u.method == m })
+	if i < 0 {
+		*list = append(*list, &usage{method: m})
+		i = len(*list) - 1
 	}
-	for _, l := range n.o.Loads {
-		for _, f := range l.Films {
-			if f.Film.Method == nil {
-				continue
-			}
-			add(f.Film.Method, f.Why, placeOf(f))
-			if f.Film.Rule != nil {
-				add(f.Film.Rule, f.Why, placeOf(f))
+	u := (*list)[i]
+	if !slices.Contains(u.whys, why) {
+		u.whys = append(u.whys, why)
+	}
+	if place != "" && !slices.Contains(u.places, place) {
+		u.places = append(u.places, place)
+	}
+}
+
+// used lists the correlations behind films in the order they appear; a rule
+// comes before the two laws that it joins. Without methods a rule that joins the
+// laws in use stands with the law that governs only.
+func used(films []checks.FilmRow, methods map[string]string) usages {
+	var list usages
+	for _, f := range films {
+		m, rule := f.Film.Method, f.Film.Rule
+		switch {
+		case m == nil:
+		case rule == nil:
+			list.add(m, f.Why, placeOf(f))
+		default:
+			part := "one of the two laws that the rule “" + rule.Name + "” joins"
+			list.add(rule, f.Why, placeOf(f))
+			list.add(m, part, placeOf(f))
+			for _, law := range lawsOf(rule, f.Film.Kind, methods) {
+				list.add(law, part, "")
 			}
 		}
 	}
 	return list
+}
+
+// joined are the laws of the rules that name them; other rules join the laws in
+// use for vertical and for horizontal plates.
+var joined = map[string][]string{
+	"churchill-chu-popiel-vertical-cylinder": {"churchill-chu-1975-plate", "popiel-2008-vertical-cylinder"},
+	"raithby-hollands-1975-inclined-up":      {"raithby-hollands-1975-plate", "raithby-hollands-1975-up"},
+	"raithby-hollands-1975-inclined-down":    {"raithby-hollands-1975-plate", "raithby-hollands-1975-down"},
+}
+
+// lawsOf are the two laws that a rule joins.
+func lawsOf(rule *freeconv.Correlation, k freeconv.Kind, methods map[string]string) []*freeconv.Correlation {
+	var list []*freeconv.Correlation
+	for _, id := range joined[rule.ID] {
+		if c, ok := freeconv.Find(id); ok {
+			list = append(list, c)
+		}
+	}
+	if len(list) > 0 || methods == nil {
+		return list
+	}
+	horizontal := freeconv.PlateUp
+	if k == freeconv.InclinedDown {
+		horizontal = freeconv.PlateDown
+	}
+	return []*freeconv.Correlation{lawFor(freeconv.VerticalPlate, methods), lawFor(horizontal, methods)}
+}
+
+// lawFor is the law asked for in a situation, or its default.
+func lawFor(k freeconv.Kind, methods map[string]string) *freeconv.Correlation {
+	if own, ok := freeconv.Find(methods[string(k)]); ok && own.Fits(k) {
+		return own
+	}
+	c, _ := freeconv.Default(k)
+	return c
 }
 
 func placeOf(f checks.FilmRow) string {
@@ -134,28 +246,32 @@ func placeOf(f checks.FilmRow) string {
 
 // correlation is the record of one correlation.
 func (n *note) correlation(u *usage) {
-	m := u.method
-	d := n.d
-	d.Need(64)
-	d.Space(1.5)
-	n.margin(d.Y+3.6, n.refs.marks(m.Citation))
-	d.Para(pdf.T(m.Name), boldStyle, n.left(), measure)
-	d.Y += 1.5
-	n.equation(m.Equation)
+	n.correlationHead(u.method, 44)
 	var rows []pdf.Row
 	for _, f := range correlationFacts(u) {
 		if f[1] != "" {
 			rows = append(rows, pdf.Row{Cells: []pdf.Cell{{Runs: pdf.T(f[0])}, f2(f[1])}})
 		}
 	}
-	n.tableIn(n.left()+6, n.width()-6, []pdf.Column{{Width: 34}, {Width: 130}}, rows)
+	n.tableIn(n.left()+6, n.width()-6, []pdf.Column{{Width: 32}, {Width: 132}}, rows)
+}
+
+// correlationHead is the name and the equation of a correlation.
+func (n *note) correlationHead(m *freeconv.Correlation, room float64) {
+	d := n.d
+	d.Need(room)
+	d.Space(1)
+	n.margin(d.Y+3.6, n.refs.marks(m.Citation))
+	d.Para(pdf.T(m.Name), boldStyle, n.left(), measure)
+	d.Y += 0.8
+	n.equation(m.Equation)
 }
 
 func f2(s string) pdf.Cell {
 	if src, ok := strings.CutPrefix(s, "$"); ok {
 		return mathCell(src)
 	}
-	return pdf.C(s)
+	return pdf.Cell{Runs: prose(s)}
 }
 
 // equation displays the equation of a correlation, which may have lines.
@@ -187,8 +303,8 @@ func correlationFacts(u *usage) [][2]string {
 		{"Published scatter", scatterOf(m)},
 		{"Form", capital(string(m.Verification))},
 		{"Used on", strings.Join(u.places, ", ")},
-		{"Why this one", capital(powers(u.why))},
-		{"Note", powers(m.Note)},
+		{"Why this one", capital(strings.Join(u.whys, "; "))},
+		{"Note", m.Note},
 	}
 }
 
@@ -230,14 +346,9 @@ func scatterOf(m *freeconv.Correlation) string {
 		return fmt.Sprintf("± %.3g\u00A0%%: %s", 100*m.Scatter, m.ScatterNote)
 	}
 	if m.ScatterNote != "" {
-		return capital(m.ScatterNote) + "; the shift of the uncertainty table is used instead"
+		return capital(m.ScatterNote) + "; the uncertainty of the film coefficient in the inputs is used"
 	}
-	return "None published; the shift of the uncertainty table is used instead"
-}
-
-// decisionRule prints the rule that turns margins into verdicts.
-func (n *note) decisionRule() {
-	n.cited(limit.DecisionRule, ilacSource, jcgm106Source)
+	return "None published; the uncertainty of the film coefficient in the inputs is used"
 }
 
 func hasSun(c caseOf) bool { return len(c.Surroundings.Sun) > 0 }

@@ -103,6 +103,7 @@ type note struct {
 	sections int
 	parts    int // subsections of the present section
 	formulas int
+	figures  int
 	refs     references
 }
 

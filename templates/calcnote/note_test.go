@@ -152,7 +152,7 @@ func checkNumbers(t *testing.T, o *checks.Outcome, text string) {
 			find("method", f.Method)
 		}
 	}
-	for _, s := range append(append([]string{}, o.Cautions...), o.Assumptions...) {
+	for _, s := range append(append([]string{}, n.cautionList()...), o.Assumptions...) {
 		find("sentence", s)
 	}
 	find("inputs hash", o.Case.SHA256)
@@ -365,7 +365,7 @@ func TestBadLogoIsAnError(t *testing.T) {
 
 // TestAllFormulasCanBeSet reads every formula the note may print.
 func TestAllFormulasCanBeSet(t *testing.T) {
-	sources := []string{formulaRayleigh, formulaFilm, formulaProperties, formulaRadiation, formulaSun, formulaPlane, formulaCylinder, formulaSphere, formulaBalance, formulaUpper, formulaCombine, conductionFormula("vessel")}
+	sources := []string{formulaRayleigh, formulaFilm, formulaProperties, formulaRadiation, formulaSun, formulaPlane, formulaCylinder, formulaSphere, formulaBalance, formulaUpper, formulaCombine, formulaPressure, conductionFormula("vessel")}
 	for _, c := range freeconv.All() {
 		sources = append(sources, strings.Split(quantities(c.Equation), "\n")...)
 		sources = append(sources, strings.Split(quantities(c.Substitute(freeconv.Input{Ra: 1.234e7, Pr: 0.7, LD: 3, Theta: 30, AP: 0.3})), "\n")...)

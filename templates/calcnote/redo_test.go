@@ -19,11 +19,19 @@ func TestWorkedLinesCanBeRedone(t *testing.T) {
 		for i := range o.Loads {
 			n := (note{o: o}).with(nil)
 			n.gov = i
+			var all []string
 			for _, f := range o.Loads[i].Films {
-				for _, src := range n.surfaceLines(f) {
-					if redo(t, name, src) {
-						lines++
-					}
+				all = append(all, n.surfaceLines(f)...)
+			}
+			all = append(all, wholeLine(n.load()))
+			for _, z := range n.altitudes() {
+				for _, line := range pressureLines(z) {
+					all = append(all, strings.Split(line, `, \quad `)...)
+				}
+			}
+			for _, src := range all {
+				if redo(t, name, src) {
+					lines++
 				}
 			}
 		}
@@ -226,13 +234,16 @@ func TestLayersCanBeRedone(t *testing.T) {
 			continue
 		}
 		for _, layer := range l.Layers {
-			row := layerRow(layer, smallestStep(l.Layers))
-			var v [7]float64
-			for j := 1; j < 7; j++ {
-				v[j], _ = strconv.ParseFloat(row.Cells[j].Runs[0].Text, 64)
+			row := layerRow(layer.At, "(a)", layer, smallestStep(l.Layers))
+			var v [8]float64
+			for j := 3; j < 8; j++ {
+				v[j] = printed(t, row.Cells[j].Runs[0].Text)
 			}
-			if q := v[3] * v[2] * (v[4] - v[5]); math.Abs(q-v[6]) > Rounding*math.Abs(v[6])+1e-9 {
-				t.Errorf("%s, %s: k S (T1-T2) = %.6g, printed %.6g", name, layer.At, q, v[6])
+			if q := v[4] * v[3] * (v[5] - v[6]); math.Abs(q-v[7]) > Rounding*math.Abs(v[7])+1e-9 {
+				t.Errorf("%s, %s: k S (T1-T2) = %.6g, printed %.6g", name, layer.At, q, v[7])
+			}
+			if s := shapeFactor(t, row.Cells[2].Runs[0].Text); math.Abs(s-v[3]) > Rounding*v[3] {
+				t.Errorf("%s, %s: S from %q is %.6g, printed %.6g", name, layer.At, row.Cells[2].Runs[0].Text, s, v[3])
 			}
 			rows++
 		}
@@ -240,4 +251,72 @@ func TestLayersCanBeRedone(t *testing.T) {
 	if rows < 8 {
 		t.Errorf("only %d layers", rows)
 	}
+}
+
+// printed reads a number as the note prints it.
+func printed(t *testing.T, text string) float64 {
+	t.Helper()
+	text = strings.NewReplacer("−", "-", "·10", "e", "⁻", "-", "⁰", "0", "¹", "1", "²", "2", "³", "3", "⁴", "4", "⁵", "5", "⁶", "6", "⁷", "7", "⁸", "8", "⁹", "9").Replace(text)
+	v, err := strconv.ParseFloat(text, 64)
+	if err != nil {
+		t.Errorf("%q is no number", text)
+	}
+	return v
+}
+
+// shapeFactor works S out from the sizes printed beside it: A/t of a plane
+// layer, 2 pi l/ln(r2/r1) of a cylinder, 4 pi r1 r2/(r2 - r1) of a sphere.
+func shapeFactor(t *testing.T, text string) float64 {
+	t.Helper()
+	size := map[string]float64{}
+	for _, part := range strings.Split(text, ", ") {
+		f := strings.Fields(strings.ReplaceAll(part, "\u00A0", " "))
+		size[f[0]] = printed(t, f[2])
+	}
+	r1, r2 := size["r₁"], size["r₂"]
+	switch {
+	case size["A"] > 0:
+		return size["A"] / (size["t"] / 1000)
+	case size["ℓ"] > 0:
+		return 2 * math.Pi * size["ℓ"] / math.Log(r2/r1)
+	}
+	return 4 * math.Pi * r1 * r2 / (r2 - r1)
+}
+
+// TestSecondMethodCanBeRedone works Ra, Nu and h of the second method out again
+// from the numbers of its table.
+func TestSecondMethodCanBeRedone(t *testing.T) {
+	films := 0
+	for _, name := range starters() {
+		for _, l := range outcome(t, name).Loads {
+			if l.Second == nil {
+				continue
+			}
+			for _, f := range l.Second.Films {
+				redoFilm(t, name, f)
+				films++
+			}
+		}
+	}
+	if films < 20 {
+		t.Errorf("only %d films", films)
+	}
+}
+
+func redoFilm(t *testing.T, name string, f checks.FilmRow) {
+	t.Helper()
+	v := map[string]float64{}
+	for _, q := range secondQuantities {
+		v[q.symbol] = printed(t, q.of(f))
+	}
+	agree := func(what string, got, want float64) {
+		if math.Abs(got-want) > Rounding*math.Abs(want)+1e-9 {
+			t.Errorf("%s, %s, %s: %s = %.6g from printed numbers, printed %.6g", name, f.At, f.Side, what, got, want)
+		}
+	}
+	agree("Ra", v["g"]*math.Abs(v[`\Delta T`])*math.Pow(v["L"], 3)/(v[`T_\beta = 1/\beta`]*v[`\nu`]*v[`\alpha`]), v["Ra"])
+	in := f.Film.In
+	in.Ra, in.Pr = v["Ra"], v["Pr"]
+	agree("Nu", f.Film.Method.Nu(in), v["Nu"])
+	agree("h", v["Nu"]*v["k"]/v["L"], v["h"])
 }

@@ -10,7 +10,7 @@ type references struct{ list []string }
 
 // number is the number of a source, new when it was not cited before.
 func (r *references) number(source string) int {
-	source = strings.TrimSpace(source)
+	source = tidySource(source)
 	for i, s := range r.list {
 		if s == source {
 			return i + 1
@@ -29,6 +29,23 @@ func (r *references) marks(sources ...string) string {
 		}
 	}
 	return strings.Join(out, "\u00A0")
+}
+
+// sourceMark shortens a source to its first words and the number of the
+// citation that follows them: "material table [3] (confidence high)".
+func (r *references) sourceMark(source string) string {
+	for _, table := range []string{"material table", "finish table"} {
+		rest, found := strings.CutPrefix(source, table+": ")
+		if !found {
+			continue
+		}
+		confidence := ""
+		if i := strings.LastIndex(rest, " (confidence "); i > 0 {
+			rest, confidence = rest[:i], rest[i:]
+		}
+		return table + "\u00A0" + r.marks(rest) + confidence
+	}
+	return tidySource(source)
 }
 
 // Sources of what the note itself says.

@@ -25,7 +25,7 @@ const Rounding = 0.001
 
 // worked substitutes numbers into the equations, one surface per kind of film.
 func (n *note) worked() {
-	n.section("Worked surfaces")
+	n.sectionRoom("Worked surfaces", 100)
 	l := n.load()
 	if l.Status != checks.Converged || len(l.Films) == 0 {
 		n.text("Not computed: the governing load case has no valid result.")
@@ -73,21 +73,33 @@ func (n *note) surface(f checks.FilmRow) {
 	if v.Method == nil {
 		return
 	}
-	n.part(fmt.Sprintf("%s, %s: %s", capital(f.At), f.Side, v.Kind), 56)
+	lines := n.surfaceLines(f)
+	columns, rows := n.givens(f)
+	n.part(fmt.Sprintf("%s, %s: %s", capital(f.At), f.Side, v.Kind), n.surfaceRoom(columns, rows, lines))
 	n.d.Y += 0.5
 	n.cited(fmt.Sprintf("%s; %s; %s.", f.Method, strings.ReplaceAll(f.Length, " ", "\u00A0"), v.Regime), v.Method.Citation)
-	n.givens(f)
-	for _, line := range n.surfaceLines(f) {
+	n.tableIn(n.left()+6, n.width()-6, columns, rows)
+	for _, line := range lines {
 		n.display(line, "")
 	}
 	n.closing(f)
 	for _, s := range f.Notes {
-		n.d.Para(pdf.T("Remark: "+s), smallStyle, n.left()+6, measure-6)
-		n.d.Y += 1
+		n.d.Para(prose("Remark: "+s), smallStyle, n.left()+6, measure-6)
+		n.d.Y += 0.6
 	}
 	if !f.InRange {
-		n.d.Para(pdf.T("Outside the range of the source: "+f.Range), smallStyle.With(pdf.Bold), n.left()+6, measure-6)
+		n.d.Para(prose("Outside the range of the source: "+f.Range), smallStyle.With(pdf.Bold), n.left()+6, measure-6)
 	}
+}
+
+// surfaceRoom is the room for the head of a surface: its table and the first
+// two lines.
+func (n *note) surfaceRoom(columns []pdf.Column, rows []pdf.Row, lines []string) float64 {
+	h := 8 + n.d.TableHeight(styled(n.left()+6, n.width()-6, columns, rows))
+	for _, line := range lines[:min(2, len(lines))] {
+		h += n.lineHeight(line)
+	}
+	return h
 }
 
 // surfaceLines are the equations of a surface with numbers in them, in the
@@ -105,40 +117,69 @@ func (n *note) surfaceLines(f checks.FilmRow) []string {
 	return append(lines, n.outsideLines(f)...)
 }
 
+// given is one symbol with its value.
+type given struct{ symbol, value, unit string }
+
 // givens is the table of what goes into the formulas.
-func (n *note) givens(f checks.FilmRow) {
+func (n *note) givens(f checks.FilmRow) ([]pdf.Column, []pdf.Row) {
 	v, p := f.Film, f.Film.Props
-	type given struct{ symbol, value, unit string }
-	celsius := func(k float64) string {
-		return fmt.Sprintf("%.3f", k)
-	}
-	list := []given{
-		{`T_\mathrm{s}`, celsius(v.Ts), "K  (" + n.temp(v.Ts) + ")"},
-		{`T_\mathrm{a}`, celsius(v.Ta), "K  (" + n.temp(v.Ta) + ")"},
+	both := func(k float64) string { return "K (" + n.temp(k) + ")" }
+	groups := [][]given{{
+		{`T_\mathrm{s}`, kelvin(v.Ts, 1), both(v.Ts)},
+		{`T_\mathrm{a}`, kelvin(v.Ta, 1), both(v.Ta)},
+		{`T_\mathrm{r}`, kelvin(f.RadiantK, 1), both(f.RadiantK)},
 		{`\Delta T`, plainDigits(v.DT, 5), "K"},
-		{`T`, celsius(v.TProps), "K, property temperature"},
-		{`\beta = 1/T_\beta`, plainDigits(1/v.TBeta, 5), fmt.Sprintf("1/K, at %.3f\u00A0K", v.TBeta)},
-		{`g`, plainDigits(v.Gravity, 6), "m/s²"},
+		{`T`, kelvin(v.TProps, 1), "K"},
+	}, {
+		{`T_\beta`, kelvin(v.TBeta, 1), "K"},
+		{`\beta`, plainDigits(1/v.TBeta, 5), "1/K"},
 		{`L`, plainDigits(v.Length, 5), "m"},
 		{`A`, plainDigits(f.AreaM2, 5), "m²"},
+		{`g`, plainDigits(v.Gravity, 6), "m/s²"},
+	}, {
 		{`p`, plainDigits(p.P/1000, 6), "kPa"},
 		{`\rho`, plainDigits(p.Rho, 5), "kg/m³"},
 		{`c_p`, plainDigits(p.Cp, 6), "J/(kg·K)"},
 		{`\mu`, plainDigits(p.Mu, 5), "Pa·s"},
 		{`k`, plainDigits(p.K, 5), "W/(m·K)"},
+	}, {
 		{`\nu`, plainDigits(p.Nu, 5), "m²/s"},
 		{`\alpha`, plainDigits(p.Alpha, 5), "m²/s"},
 		{`Pr`, plainDigits(p.Pr, 5), ""},
+		{`\varepsilon`, exact(f.Emissivity), ""},
+	}}
+	if f.SunWm2 != 0 {
+		groups[2] = append(groups[2], given{`G`, exact(f.SunWm2), "W/m²"})
+		groups[3] = append(groups[3], given{`\alpha_\mathrm{s}`, exact(f.Absorptance), ""})
 	}
-	half := (len(list) + 1) / 2
-	var rows []pdf.Row
-	for i := range half {
-		a, b := list[i], list[i+half]
-		rows = append(rows, pdf.Row{Cells: []pdf.Cell{mathCell(a.symbol), pdf.C(a.value), pdf.C(a.unit), mathCell(b.symbol), pdf.C(b.value), pdf.C(b.unit)}})
+	return givenColumns(), givenRows(groups)
+}
+
+func givenColumns() []pdf.Column {
+	var list []pdf.Column
+	for _, width := range []float64{31, 24, 26, 26} {
+		list = append(list, pdf.Column{Width: 9}, pdf.Column{Width: width})
 	}
-	n.tableIn(n.left()+6, measure, []pdf.Column{
-		{Head: "Symbol", Width: 17}, {Head: "Value", Width: 21, Align: pdf.AlignRight}, {Head: "Unit", Width: 40},
-		{Head: "Symbol", Width: 15}, {Head: "Value", Width: 24, Align: pdf.AlignRight}, {Head: "Unit", Width: 22}}, rows)
+	return list
+}
+
+// givenRows puts the groups side by side.
+func givenRows(groups [][]given) []pdf.Row {
+	longest := 0
+	for _, g := range groups {
+		longest = max(longest, len(g))
+	}
+	rows := make([]pdf.Row, longest)
+	for i := range rows {
+		for _, g := range groups {
+			if i < len(g) {
+				rows[i].Cells = append(rows[i].Cells, mathCell(g[i].symbol), pdf.C(strings.TrimSpace(g[i].value+"\u00A0"+strings.ReplaceAll(g[i].unit, " ", "\u00A0"))))
+			} else {
+				rows[i].Cells = append(rows[i].Cells, pdf.C(""), pdf.C(""))
+			}
+		}
+	}
+	return rows
 }
 
 func rayleighLine(v freeconv.Film) string {
@@ -184,41 +225,48 @@ func signed(x float64) string {
 
 // outsideLines are radiation, sun and their sum with the convection.
 func (n *note) outsideLines(f checks.FilmRow) []string {
-	l := n.load()
-	rad, ok := find(l.Heat, func(h checks.HeatPath) bool { return h.From == f.At && h.By == "radiation" && h.Final })
-	if !ok {
-		return nil
+	lines := []string{radiationLine(f.Emissivity, f.AreaM2, f.Film.Ts, f.RadiantK, f.RadiationW, `T_\mathrm{s}^4 - T_\mathrm{r}^4`)}
+	if f.SunWm2 == 0 {
+		return append(lines, sumLine([]string{`Q_\mathrm{c}`, `Q_\mathrm{r}`}, f.W, f.RadiationW))
 	}
-	c := l.Case
-	tr := c.Surroundings.Radiant.SI
-	if q, own := c.Surroundings.Sees[f.At]; own {
-		tr = q.SI
-	}
-	lines := []string{radiationLine(c.Body.Emissivity.Typical, f.AreaM2, f.Film.Ts, tr, rad.W, `T_\mathrm{s}^4 - T_\mathrm{r}^4`)}
-	sum, numbers, total := `Q_\mathrm{c} + Q_\mathrm{r}`, digits(f.W, 5)+` + `+signed(rad.W), f.W+rad.W
-	if sun, ok := find(l.Heat, func(h checks.HeatPath) bool { return h.To == f.At && h.By == "sun" }); ok {
-		lines = append(lines, fmt.Sprintf(`Q_\mathrm{s} = \alpha_\mathrm{s}\,G\,A = %s \times %s \times %s = %s\ \mathrm{W}`,
-			exact(c.Body.Absorb.Typical), exact(c.Surroundings.Sun[f.At].SI), digits(f.AreaM2, 5), digits(sun.W, 5)))
-		sum += ` - Q_\mathrm{s}`
-		numbers += ` - ` + signed(sun.W)
-		total -= sun.W
-	}
-	return append(lines, fmt.Sprintf(`%s = %s = %s\ \mathrm{W}`, sum, numbers, digits(total, 5)))
+	return append(lines,
+		fmt.Sprintf(`Q_\mathrm{s} = \alpha_\mathrm{s}\,G\,A = %s \times %s \times %s = %s\ \mathrm{W}`,
+			exact(f.Absorptance), exact(f.SunWm2), digits(f.AreaM2, 5), digits(f.SunW, 5)),
+		sumLine([]string{`Q_\mathrm{c}`, `Q_\mathrm{r}`, `Q_\mathrm{s}`}, f.W, f.RadiationW, -f.SunW))
 }
 
 // insideLines are the radiation to the wall and its sum with the convection.
 func (n *note) insideLines(f checks.FilmRow) []string {
-	l := n.load()
-	rad, ok := find(l.Heat, func(h checks.HeatPath) bool {
-		return h.By == "radiation" && !h.Final && (h.To == f.At || h.To == f.At+", inside")
-	})
-	if !ok {
-		return nil
-	}
 	return []string{
-		radiationLine(l.Case.Inside.Emissivity.SI, f.AreaM2, f.Film.Ta, f.Film.Ts, rad.W, `T_\mathrm{a}^4 - T_\mathrm{s}^4`),
-		fmt.Sprintf(`Q_\mathrm{c} + Q_\mathrm{r} = %s + %s = %s\ \mathrm{W}`, digits(f.W, 5), signed(rad.W), digits(f.W+rad.W, 5)),
+		radiationLine(f.Emissivity, f.AreaM2, f.RadiantK, f.Film.Ts, f.RadiationW, `T_\mathrm{r}^4 - T_\mathrm{s}^4`),
+		sumLine([]string{`Q_\mathrm{c}`, `Q_\mathrm{r}`}, f.W, f.RadiationW),
 	}
+}
+
+// sumLine adds up heats in W, the third one with a minus sign. The terms carry
+// one decimal more than the sum, so that they add up to it as printed.
+func sumLine(symbols []string, terms ...float64) string {
+	largest, total := 0.0, 0.0
+	for _, t := range terms {
+		largest, total = math.Max(largest, math.Abs(t)), total+t
+	}
+	decimals := 4
+	if largest > 0 {
+		decimals = min(9, max(1, 5-int(math.Floor(math.Log10(largest)))))
+	}
+	left, right := symbols[0], fmt.Sprintf("%.*f", decimals, terms[0])
+	for i, t := range terms[1:] {
+		sign := " + "
+		if i == 1 {
+			sign, t = " - ", -t
+		}
+		number := fmt.Sprintf("%.*f", decimals, t)
+		if t < 0 {
+			number = `\left(` + number + `\right)`
+		}
+		left, right = left+sign+symbols[i+1], right+sign+number
+	}
+	return fmt.Sprintf(`%s = %s = %.*f\ \mathrm{W}`, left, right, decimals-1, total)
 }
 
 // closing compares what leaves the face with what reaches it from the body.
@@ -240,43 +288,47 @@ func (n *note) closing(f checks.FilmRow) {
 		}
 	}
 	if found {
-		n.textf("From inside the body %s\u00A0W reach this face: the balance closes within %s\u00A0W.", plainDigits(in, 5), plainDigits(math.Abs(in-out), 1))
+		n.textf("From inside the body %s\u00A0W reach this face: the balance closes %s.", plainDigits(in, 5), within(in-out, in))
 	}
+}
+
+// within tells how well a balance closes. What is below the digits that a
+// number in the machine carries is no heat.
+func within(left, carried float64) string {
+	if math.Abs(left) <= 1e-14*math.Abs(carried) {
+		return "to the last digit carried"
+	}
+	return "within " + plainDigits(math.Abs(left), 1) + unit.NoBreak + "W"
 }
 
 // wholeBody adds up all faces: what leaves must be what the body gets.
 func (n *note) wholeBody() {
 	l := n.load()
+	n.part("All faces together", 13)
+	n.display(wholeLine(l), "")
+	if l.Case.Heat.Set {
+		n.textf("The heat to shed is %s\u00A0W; every heat balance of the body closes %s.", exact(l.Case.Heat.SI), within(l.ClosureW, l.HeatW))
+	}
+}
+
+// wholeLine is the sum over all faces.
+func wholeLine(l *checks.LoadOutcome) string {
 	sum := map[string]float64{}
 	for _, h := range l.Heat {
 		if h.Final || h.By == "sun" {
 			sum[h.By] += h.W
 		}
 	}
-	n.part("All faces together", 20)
-	symbols, numbers := `\sum Q_\mathrm{c} + \sum Q_\mathrm{r}`, digits(sum["convection"], 6)+` + `+signed(sum["radiation"])
+	symbols, terms := []string{`\sum Q_\mathrm{c}`, `\sum Q_\mathrm{r}`}, []float64{sum["convection"], sum["radiation"]}
 	if sum["sun"] != 0 {
-		symbols += ` - \sum Q_\mathrm{s}`
-		numbers += ` - ` + digits(sum["sun"], 6)
+		symbols, terms = append(symbols, `\sum Q_\mathrm{s}`), append(terms, -sum["sun"])
 	}
-	n.display(fmt.Sprintf(`%s = %s = %s\ \mathrm{W}`, symbols, numbers, digits(l.HeatW, 6)), "")
-	if l.Case.Heat.Set {
-		n.textf("The heat to shed is %s\u00A0W; the largest heat left over anywhere in the balance is %s\u00A0W.", exact(l.Case.Heat.SI), closure(l.ClosureW))
-	}
+	return sumLine(symbols, terms...)
 }
 
 func radiationLine(eps, area, t1, t2, w float64, powers string) string {
 	return fmt.Sprintf(`Q_\mathrm{r} = \varepsilon\,\sigma\,A \left(%s\right) = %s \times %s \times %s \times \left(%.3f^4 - %.3f^4\right) = %s\ \mathrm{W}`,
 		powers, exact(eps), sigmaText, digits(area, 5), t1, t2, digits(w, 5))
-}
-
-func find(list []checks.HeatPath, is func(checks.HeatPath) bool) (checks.HeatPath, bool) {
-	for _, h := range list {
-		if is(h) {
-			return h, true
-		}
-	}
-	return checks.HeatPath{}, false
 }
 
 // otherFilms is the table of the films that were not worked out above.
@@ -285,18 +337,31 @@ func (n *note) otherFilms(shown map[int]bool) {
 	if len(films) == len(shown) {
 		return
 	}
-	n.part("All films of this load case", 30)
+	n.part("All films of this load case", 24)
 	var rows []pdf.Row
 	for _, f := range films {
-		r := cells(placeOf(f), string(f.Film.Kind), plainDigits(f.LengthM, 4), fmt.Sprintf("%.2f", f.FilmK), plainDigits(f.Ra, 4), plainDigits(f.Nu, 4),
-			n.bare(unit.Coefficient, f.H, 3), plainDigits(f.AreaM2, 4), n.bare(unit.Power, f.W, 2), inRange(f))
-		rows = append(rows, r)
+		rows = append(rows, cells(placeOf(f), string(f.Film.Kind), plainDigits(f.LengthM, 4), fmt.Sprintf("%.2f", f.FilmK), plainDigits(f.Ra, 4)+outOfRange(f), plainDigits(f.Nu, 4),
+			fmt.Sprintf("%.3f", f.H), plainDigits(f.AreaM2, 4), n.bare(unit.Power, f.W, 2), n.bare(unit.Power, f.RadiationW, 2)))
 	}
 	n.table([]pdf.Column{
-		{Head: "Film", Width: 29}, {Head: "Situation", Width: 41}, {Head: "L / m", Width: 14, Align: pdf.AlignDecimal}, {Head: "T / K", Width: 14, Align: pdf.AlignDecimal},
-		{Head: "Ra", Width: 19}, {Head: "Nu", Width: 13, Align: pdf.AlignDecimal}, {Head: "h / " + n.sys.Unit(unit.Coefficient), Width: 18, Align: pdf.AlignDecimal},
-		{Head: "A / m²", Width: 14, Align: pdf.AlignDecimal}, {Head: "Q / W", Width: 15, Align: pdf.AlignDecimal}, {Head: "In range", Width: 12}}, rows)
+		{Head: "Film", Width: 29}, {Head: "Situation", Width: 49}, {Head: "L / m", Width: 18, Align: pdf.AlignDecimal}, {Head: "T / K", Width: 16, Align: pdf.AlignDecimal},
+		{Head: "Ra", Width: 23}, {Head: "Nu", Width: 14, Align: pdf.AlignDecimal}, {Head: "h / W/(m²·K)", Width: 25, Align: pdf.AlignDecimal},
+		{Head: "A / m²", Width: 16, Align: pdf.AlignDecimal}, {Head: "Conv. / W", Width: 16, Align: pdf.AlignDecimal}, {Head: "Rad. / W", Width: 16, Align: pdf.AlignDecimal}}, rows)
+	if anyOutside(films) {
+		n.small(starLegend)
+	}
+	n.small(unrounded)
 }
+
+// outOfRange marks a film outside the range of its source; starLegend says so.
+func outOfRange(f checks.FilmRow) string {
+	if f.InRange {
+		return ""
+	}
+	return " *"
+}
+
+const starLegend = "* outside the range of the source of its correlation"
 
 func inRange(f checks.FilmRow) string {
 	if f.InRange {

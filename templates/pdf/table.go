@@ -56,7 +56,7 @@ type Table struct {
 }
 
 const (
-	cellPad = 1.0 // mm, above and below the text of a cell
+	cellPad = 0.6 // mm, above and below the text of a cell
 	gutter  = 2.4 // mm, between columns
 )
 
@@ -91,6 +91,27 @@ func (d *Doc) Table(t Table) {
 	}
 	d.Line(t.X, d.Y, t.X+t.W, d.Y, 0.25, t.Rule)
 	d.Y += 0.2
+}
+
+// TableHeight is the height of a table that no page break cuts.
+func (d *Doc) TableHeight(t Table) float64 {
+	if len(t.Columns) == 0 {
+		return 0
+	}
+	g := grid{d: d, t: t}
+	g.columns()
+	h := g.headH + 0.2
+	for i := range t.Rows {
+		h += g.rowHeight(i)
+	}
+	return h
+}
+
+// TableStart is the height of the head of a table and its first two rows,
+// which stay together.
+func (d *Doc) TableStart(t Table) float64 {
+	t.Rows = t.Rows[:min(2, len(t.Rows))]
+	return d.TableHeight(t)
 }
 
 // rowHeight is the height of row i, 0 past the last.

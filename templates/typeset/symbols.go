@@ -16,6 +16,7 @@ var symbols = func() map[string]symbol {
 		"equiv": {text: "≡", class: relation}, "to": {text: "→", class: relation},
 		"infty": {text: "∞"}, "partial": {text: "∂"}, "degree": {text: "°"}, "circ": {text: "°"},
 		"sum": {text: "∑", class: function}, "int": {text: "∫", class: function}, "dots": {text: "…"}, "ldots": {text: "…"},
+		"ell": {text: "ℓ"},
 	}
 	for _, f := range []string{"ln", "log", "exp", "sin", "cos", "tan", "max", "min", "tanh", "cosh", "sinh", "arctan"} {
 		m[f] = symbol{text: f, class: function}
