@@ -187,6 +187,9 @@ func (k criterion) judge(t Temp, effects []Effect) Judged {
 
 var severity = map[Verdict]int{None: 0, NotJudged: 1, Pass: 2, ConditionalPass: 3, ConditionalFail: 4, Fail: 5, NoResult: 6}
 
+// Rank orders verdicts from nothing judged to the worst.
+func (v Verdict) Rank() int { return severity[v] }
+
 // worse returns the graver of two verdicts.
 func worse(a, b Verdict) Verdict {
 	if severity[b] > severity[a] {

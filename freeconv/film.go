@@ -25,7 +25,7 @@ func Evaluate(f geometry.Face, s State, choice Choice) Film {
 		PropsInRange: r.tProps >= low && r.tProps <= high,
 	}
 	if o.method.IsRule() {
-		film.Rule = o.method
+		film.Rule, film.Laws = o.method, []*Correlation{r.c, o.other.c}
 	}
 	film.RangeNote = rangeNote(r)
 	film.InRange = film.RangeNote == ""

@@ -152,7 +152,9 @@ type Film struct {
 	Method *Correlation // the law whose equation gave Nu
 	// Rule is the record that chose Method as the larger of two laws, on
 	// inclined plates and vertical cylinders; otherwise nil.
-	Rule       *Correlation
+	Rule *Correlation
+	// Laws are the two laws that Rule compared, the one that governs first.
+	Laws       []*Correlation
 	Why        string // why this correlation was used: default and its reason, or asked for by name
 	In         Input  // what went into Method.Nu and Method.Substitute
 	Ts, Ta, DT float64

@@ -56,7 +56,7 @@ var fujiiImuraInclinedUp = Correlation{
 	RaMin: 1e5, RaMax: 1e11, ThetaMin: 15, ThetaMax: 75, CosG: true,
 	ScatterNote: "none published", Verification: FromMemory,
 	Note: fujiiImuraNote + "Form from memory. Ra is taken with g cos(theta). The source lists Gr_c = 5e9, 2e9, 1e8, 1e6 at 15, 30, 60, 75 degrees " +
-		"from the vertical; between them log Gr_c is interpolated, beyond them held, which is a choice of ours. Below Gr_c the law is 0.56 Ra^(1/4).",
+		"from the vertical; between them log Gr_c is interpolated, beyond them held, a convention of this program. Below Gr_c the law is 0.56 Ra^(1/4).",
 	Nu:         fujiiImuraInclined,
 	Substitute: fujiiImuraInclinedEquation,
 }

@@ -18,7 +18,7 @@ var fluxDown = Correlation{
 	Equation: `\mathrm{Nu} = 0.82\,\mathrm{Ra}^{1/5} \cdot \mathrm{Pr}^{0.034}`,
 	Length:   ShortSide, FilmWeight: 0.5, BetaWeight: 0.5,
 	RaMin: 1e4, RaMax: 1e11, ScatterNote: "none published", Verification: InPrint, Flux: true,
-	Note: "No range was seen; the one given here is ours, from neighbouring laws. Written with Ra on the mean temperature difference, which is the " +
+	Note: "No range was seen; the one given here is taken from neighbouring laws. Written with Ra on the mean temperature difference, which is the " +
 		"same as the published form with Ra* = Ra Nu.",
 	Nu: func(in Input) float64 { return 0.82 * math.Pow(in.Ra, 0.2) * math.Pow(in.Pr, 0.034) },
 }

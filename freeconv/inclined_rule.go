@@ -11,7 +11,7 @@ import "math"
 const largerPart = `h = \max\left( h_{\mathrm{vertical}}, h_{\mathrm{horizontal}} \right)`
 
 const inclinedRuleNote = "The rule was seen in print; it is used here with the vertical law (g cos(theta), slope length) and the " +
-	"horizontal law (g sin(theta), A/P) in use for those situations, which is a choice of ours. The range is that of the default vertical law."
+	"horizontal law (g sin(theta), A/P) in use for those situations, a convention of this program. The range is that of the default vertical law."
 
 var inclinedRuleUp = Correlation{
 	ID: "inclined-rule-up", Name: "Rule of Raithby & Hollands 1975, inclined plate, unstable side",

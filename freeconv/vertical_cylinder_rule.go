@@ -15,7 +15,7 @@ var verticalCylinderRule = Correlation{
 	Equation: `h = \max\left( h_{\mathrm{plate}}, h_{\mathrm{slender}} \right)`,
 	Length:   Height, FilmWeight: 0.5, BetaWeight: 0.5,
 	RaMin: 0.1, RaMax: 1e12, PrMin: 0.01, PrMax: 100, ScatterNote: churchillChuScatter, Verification: InPrint,
-	Note: "Joining the two laws by the larger h is a choice of ours: it has no jump. Range from memory.",
+	Note: "Joining the two laws by the larger h is a convention of this program: it has no jump. Range from memory.",
 	Nu:   func(in Input) float64 { return math.Max(churchillChuAll(in, 0.492), popiel(in)) },
 	parts: func(Choice) (first, second part) {
 		return part{VerticalCylinder, byID["churchill-chu-1975-plate"]}, part{VerticalCylinder, byID["popiel-2008-vertical-cylinder"]}

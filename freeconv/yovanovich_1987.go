@@ -37,7 +37,7 @@ var yovanovichAny = Correlation{
 	Equation: `\mathrm{Nu} = 3.47 + 0.51\,\mathrm{Ra}^{1/4}`,
 	Length:   SqrtArea, FilmWeight: 0.5, BetaWeight: 0.5,
 	RaMin: 0, RaMax: 1e8, PrMin: 0.68, PrMax: 0.76, ScatterNote: "none published", Verification: FromMemory,
-	Note: "Form, range and citation from memory. Given for Pr = 0.72; the ends of Pr here are ours.",
+	Note: "Form, range and citation from memory. Given for Pr = 0.72; the ends of Pr are those of air.",
 	Nu:   func(in Input) float64 { return 3.47 + 0.51*root4(in.Ra) },
 }
 

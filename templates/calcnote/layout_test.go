@@ -180,7 +180,7 @@ func TestBothLawsOfARuleAreListed(t *testing.T) {
 			films = append(films, l.Films...)
 		}
 		found := map[string]string{}
-		for _, u := range used(films, map[string]string{}) {
+		for _, u := range used(films) {
 			found[u.method.ID] = strings.Join(u.whys, "; ")
 		}
 		for _, id := range want {

@@ -38,7 +38,7 @@ func (n *note) methods() {
 	for _, l := range n.o.Loads {
 		films = append(films, l.Films...)
 	}
-	for _, u := range used(films, n.asked()) {
+	for _, u := range used(films) {
 		n.correlation(u)
 	}
 	n.part("Air", 30)
@@ -146,14 +146,6 @@ func conductionFormula(kind string) string {
 	return formulaPlane
 }
 
-// asked are the correlations asked for by name; never nil.
-func (n *note) asked() map[string]string {
-	if m := n.o.Loads[0].Case.Methods; m != nil {
-		return m
-	}
-	return map[string]string{}
-}
-
 // usage is one correlation and where it was used.
 type usage struct {
 	method *freeconv.Correlation
@@ -180,9 +172,8 @@ func (list *usages) add(m *freeconv.Correlation, why, place string) {
 }
 
 // used lists the correlations behind films in the order they appear; a rule
-// comes before the two laws that it joins. Without methods a rule that joins the
-// laws in use stands with the law that governs only.
-func used(films []checks.FilmRow, methods map[string]string) usages {
+// comes before the two laws that it joins.
+func used(films []checks.FilmRow) usages {
 	var list usages
 	for _, f := range films {
 		m, rule := f.Film.Method, f.Film.Rule
@@ -194,47 +185,12 @@ func used(films []checks.FilmRow, methods map[string]string) usages {
 			part := "one of the two laws that the rule “" + rule.Name + "” joins"
 			list.add(rule, f.Why, placeOf(f))
 			list.add(m, part, placeOf(f))
-			for _, law := range lawsOf(rule, f.Film.Kind, methods) {
+			for _, law := range f.Film.Laws {
 				list.add(law, part, "")
 			}
 		}
 	}
 	return list
-}
-
-// joined are the laws of the rules that name them; other rules join the laws in
-// use for vertical and for horizontal plates.
-var joined = map[string][]string{
-	"churchill-chu-popiel-vertical-cylinder": {"churchill-chu-1975-plate", "popiel-2008-vertical-cylinder"},
-	"raithby-hollands-1975-inclined-up":      {"raithby-hollands-1975-plate", "raithby-hollands-1975-up"},
-	"raithby-hollands-1975-inclined-down":    {"raithby-hollands-1975-plate", "raithby-hollands-1975-down"},
-}
-
-// lawsOf are the two laws that a rule joins.
-func lawsOf(rule *freeconv.Correlation, k freeconv.Kind, methods map[string]string) []*freeconv.Correlation {
-	var list []*freeconv.Correlation
-	for _, id := range joined[rule.ID] {
-		if c, ok := freeconv.Find(id); ok {
-			list = append(list, c)
-		}
-	}
-	if len(list) > 0 || methods == nil {
-		return list
-	}
-	horizontal := freeconv.PlateUp
-	if k == freeconv.InclinedDown {
-		horizontal = freeconv.PlateDown
-	}
-	return []*freeconv.Correlation{lawFor(freeconv.VerticalPlate, methods), lawFor(horizontal, methods)}
-}
-
-// lawFor is the law asked for in a situation, or its default.
-func lawFor(k freeconv.Kind, methods map[string]string) *freeconv.Correlation {
-	if own, ok := freeconv.Find(methods[string(k)]); ok && own.Fits(k) {
-		return own
-	}
-	c, _ := freeconv.Default(k)
-	return c
 }
 
 func placeOf(f checks.FilmRow) string {

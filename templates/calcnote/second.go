@@ -63,11 +63,11 @@ func (n *note) secondMethods(s *checks.SecondMethod) {
 	n.part("Its correlations", 34)
 	shown := map[*freeconv.Correlation]bool{}
 	for _, l := range n.o.Loads {
-		for _, u := range used(l.Films, n.asked()) {
+		for _, u := range used(l.Films) {
 			shown[u.method] = true
 		}
 	}
-	for _, u := range used(s.Films, nil) {
+	for _, u := range used(s.Films) {
 		if shown[u.method] {
 			n.text(u.method.Name + ": see the section on methods.")
 			continue

@@ -14,11 +14,6 @@ import (
 // mostRows is how many checks are drawn; the rest is summed up in words.
 const mostRows = 14
 
-// severity orders verdicts from good to bad.
-var severity = map[checks.Verdict]int{
-	checks.Pass: 1, checks.ConditionalPass: 2, checks.ConditionalFail: 3, checks.Fail: 4, checks.NoResult: 5,
-}
-
 // check is one limit judged in one load case.
 type check struct {
 	checks.Judged
@@ -42,7 +37,7 @@ func (c check) guard() (from, to float64) {
 
 // graver orders checks with the worst first.
 func graver(a, b check) int {
-	return cmp.Or(cmp.Compare(severity[b.Verdict], severity[a.Verdict]), cmp.Compare(a.MarginK, b.MarginK))
+	return cmp.Or(cmp.Compare(b.Verdict.Rank(), a.Verdict.Rank()), cmp.Compare(a.MarginK, b.MarginK))
 }
 
 // group is what is drawn under one limit, the worst first.
