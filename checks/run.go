@@ -57,7 +57,9 @@ func runLoad(c casefile.Case) LoadOutcome {
 		return l.without(OutOfProperties, out)
 	}
 	l.Temps, l.Heat, l.Films, l.Layers, l.HeatW = m.temps(s), m.heatPaths(s), films, m.layers(s), m.heatShed(s)
-	l.CrossCheck = crossCheck(m, s)
+	if l.CrossCheck = crossCheck(m, s); !l.CrossCheck.Agrees {
+		return l.without(NotConverged, fmt.Sprintf("plain damped substitution differs by %.2g K after %d iterations", l.CrossCheck.MaxDiffK, l.CrossCheck.Iterations))
+	}
 	if err := uncertain(m, &l); err != nil {
 		return l.without(NotConverged, err.Error())
 	}
@@ -114,7 +116,8 @@ func record(s balance.Solution) []Iteration {
 	return rows
 }
 
-// crossCheck solves the same balance by plain damped substitution.
+// crossCheck solves the same balance by plain damped substitution. Both must
+// agree, else there is no result to sign.
 func crossCheck(m *model, s balance.Solution) CrossCheck {
 	d := m.b.SolveDamped()
 	x := CrossCheck{Iterations: len(d.Steps)}
@@ -148,9 +151,6 @@ func (m *model) remarks(l LoadOutcome) []string {
 		if !y.InRange {
 			list = append(list, outsideTable(y))
 		}
-	}
-	if !l.CrossCheck.Agrees {
-		list = append(list, fmt.Sprintf("plain damped substitution differs by %.2g K after %d iterations", l.CrossCheck.MaxDiffK, l.CrossCheck.Iterations))
 	}
 	if h := m.c.Surroundings.Humidity; h.Set && !limit.DewPointInRange(m.c.Surroundings.Air.SI, h.SI) {
 		list = append(list, "the dew point lies outside the range of its formula; below 0 °C surfaces frost at a slightly higher temperature")
