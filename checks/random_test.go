@@ -2,6 +2,7 @@ package checks
 
 import (
 	"math"
+	"strings"
 	"testing"
 
 	"pgregory.net/rapid"
@@ -115,6 +116,33 @@ func TestEmissivityAndHeatWorkTheRightWay(t *testing.T) {
 		}
 		if v := solve(strong); v < base*(1-1e-9) {
 			t.Fatalf("more heat cools from %.9f K to %.9f K", base, v)
+		}
+	})
+}
+
+// Through the whole check, random bodies end converged, impossible or out of
+// the property range, never with two solvers that differ; what is converged has
+// finite numbers only.
+func TestRandomBodiesThroughTheWholeCheck(t *testing.T) {
+	rapid.Check(t, func(t *rapid.T) {
+		c := randomCase(t)
+		c.Uncertainty = casefile.Uncertainty{Heat: q(0.1), Air: q(2), Contents: q(2), Correlation: q(0.2), Inside: q(0.2), UpperZone: q(0.2), Conductivity: q(0.16), Thickness: q(0.05)}
+		l := runLoad(c)
+		switch l.Status {
+		case NotConverged: // a cooled body that a shift makes impossible
+			if c.Heat.SI >= 0 || !strings.Contains(l.Message, "absolute zero") {
+				t.Fatal(l.Message)
+			}
+		case Impossible, OutOfProperties:
+			if len(l.Temps) > 0 || l.Verdict != NoResult {
+				t.Fatalf("%s, yet %d temperatures and verdict %q", l.Status, len(l.Temps), l.Verdict)
+			}
+			return
+		}
+		for _, x := range l.Temps {
+			if math.IsNaN(x.K+x.PlusK+x.MinusK) || math.IsInf(x.K+x.PlusK+x.MinusK, 0) {
+				t.Fatalf("%s: %g K + %g - %g", x.At, x.K, x.PlusK, x.MinusK)
+			}
 		}
 	})
 }

@@ -37,15 +37,16 @@ func (b *Balance) SolveDamped() Solution {
 }
 
 // settled ends damped substitution: change of a step over the largest excess,
-// or, where the answer is that nothing differs from the air, over the reference
-// temperature.
+// and never more than settledK kelvin; where the answer is that nothing differs
+// from the air, over the reference temperature.
 const (
 	settled  = 1e-11
+	settledK = 1e-8
 	settled0 = 1e-15
 )
 
 func (b *Balance) settledBy(change float64, s *state, unknown []Node) bool {
-	return change <= math.Max(settled*b.largest(s, unknown), settled0*b.ref)
+	return change <= math.Max(math.Min(settled*b.largest(s, unknown), settledK), settled0*b.ref)
 }
 
 func (b *Balance) largest(s *state, unknown []Node) float64 {
