@@ -26,6 +26,9 @@ func assumptions(cases []casefile.Case) []string {
 	if text := coatings(c.Limits); text != "" {
 		list = append(list, text)
 	}
+	if slices.ContainsFunc(c.Limits, func(l casefile.Limit) bool { return l.NoCondensation }) {
+		list = append(list, "Condensation is judged on the outside of the faces against the air outside; inside a closed body it is not judged.")
+	}
 	if names := coveredFaces(cases); len(names) > 0 {
 		list = append(list, fmt.Sprintf("Covered faces shed no heat: %s.", strings.Join(names, ", ")))
 	}
@@ -55,6 +58,7 @@ func boxAssumptions(c casefile.Case) []string {
 	return []string{
 		fmt.Sprintf("The inside air is one mixed node; the equipment radiates to the walls as if it were at the inside air temperature, with the effective emissivity %s. This inside model rests on published films and on judgement; no measured sealed enclosure with full dimensions was available to validate it.", c.Inside.Emissivity.Typed),
 		fmt.Sprintf("The upper zone is taken as the air outside plus %s times the mean rise of the inside air: an assumed factor without a published source.", c.Inside.UpperZone.Typed),
+		"A limit of the inside air is judged on its mean; the upper zone is hotter and judged only where a limit names it.",
 		"Heat does not spread along the walls from face to face.",
 	}
 }

@@ -14,8 +14,9 @@ import (
 type criterion struct {
 	text, source, why, confidence string
 	k                             float64 // K
-	lower, touch, rise            bool
-	extra                         float64 // K, uncertainty of the limit itself
+	lower, touch                  bool
+	extra                         float64               // K, uncertainty of the limit itself
+	moves                         func(float64) float64 // K, how the limit moves with the air; nil: not at all
 	steps                         []string
 }
 
@@ -30,7 +31,7 @@ func judge(c casefile.Case, temps []Temp, effects []Effect, dew float64) []Judge
 		k := makeCriterion(l, c, dew)
 		for _, t := range temps {
 			if meant(l.At, t) {
-				rows = append(rows, k.judge(t, effects))
+				rows = append(rows, k.judge(t, effects, c.Uncertainty.Air.SI))
 			}
 		}
 	}
@@ -110,6 +111,9 @@ func makeCriterion(l casefile.Limit, c casefile.Case, dew float64) criterion {
 	return projectCriterion(l, c)
 }
 
+// withAir is a limit that moves with the air as a rise does.
+func withAir(d float64) float64 { return d }
+
 func projectCriterion(l casefile.Limit, c casefile.Case) criterion {
 	k := criterion{source: l.Source, why: l.Why}
 	if k.source == "" {
@@ -121,7 +125,7 @@ func projectCriterion(l casefile.Limit, c casefile.Case) criterion {
 	case l.Least.Set:
 		k.k, k.text, k.lower = l.Least.SI, "at least "+l.Least.Typed, true
 	default:
-		k.k, k.text, k.rise = c.Surroundings.Air.SI+l.Rise.SI, fmt.Sprintf("rise over the air of at most %s", l.Rise.Typed), true
+		k.k, k.text, k.moves = c.Surroundings.Air.SI+l.Rise.SI, fmt.Sprintf("rise over the air of at most %s", l.Rise.Typed), withAir
 	}
 	k.touch = onFace(l.At) && !k.lower
 	return k
@@ -142,17 +146,24 @@ func touchCriterion(l casefile.Limit) criterion {
 func ruleCriterion(l casefile.Limit, c casefile.Case) criterion {
 	e, _ := limit.Find(l.Rule)
 	k, _ := e.Kelvin(c.Surroundings.Air.SI)
-	return criterion{
+	r := criterion{
 		text: e.Text(), source: fmt.Sprintf("%s; quoted from %s", e.Standard, e.Source),
-		why: l.Why, confidence: e.Confidence, k: k, rise: e.IsRise(), touch: onFace(l.At),
+		why: l.Why, confidence: e.Confidence, k: k, touch: onFace(l.At),
 	}
+	if e.IsRise() {
+		r.moves = withAir
+	}
+	return r
 }
 
 func dewCriterion(c casefile.Case, dew float64) criterion {
 	s := c.Surroundings
 	return criterion{
 		text:   fmt.Sprintf("no condensation: above the dew point of air at %s and %s relative humidity", s.Air.Typed, s.Humidity.Typed),
-		source: dewPointSource, k: dew, lower: true, rise: true, extra: dewUncertainty(s, c.Uncertainty.Humidity.SI),
+		source: dewPointSource, k: dew, lower: true, extra: dewUncertainty(s, c.Uncertainty.Humidity.SI),
+		moves: func(d float64) float64 {
+			return limit.DewPoint(s.Air.SI+d, s.Humidity.SI) - limit.DewPoint(s.Air.SI, s.Humidity.SI)
+		},
 	}
 }
 
@@ -163,19 +174,17 @@ func dewUncertainty(s casefile.Surroundings, u float64) float64 {
 	return limit.DewPoint(s.Air.SI, wet) - limit.DewPoint(s.Air.SI, s.Humidity.SI)
 }
 
-// judge compares one temperature by the four-way rule. The uncertainty is the
-// one on the side of the limit. A rise is not blamed for the uncertainty of
-// the air it is counted from, nor is the distance to the dew point, which moves
-// with the air as the surface does.
-func (k criterion) judge(t Temp, effects []Effect) Judged {
-	skip := ""
-	if k.rise {
-		skip = ofAir
-	}
-	plus, minus := combine(effects, t.At, skip)
+// judge compares one temperature by the four-way rule. The uncertainty is that
+// of the distance to the limit, on the side on which the limit lies: a rise and
+// the distance to the dew point move with the air as their limit does.
+func (k criterion) judge(t Temp, effects []Effect, air float64) Judged {
+	plus, minus := k.uncertainty(t.At, effects, air)
 	margin, u := k.k-t.K, plus
 	if k.lower {
-		margin, u = t.K-k.k, minus
+		margin = -margin
+	}
+	if t.K > k.k {
+		u = minus
 	}
 	u = math.Hypot(u, k.extra)
 	word, p := limit.Judge(t.K, k.k, u, k.lower)
@@ -183,6 +192,23 @@ func (k criterion) judge(t Temp, effects []Effect) Judged {
 		At: t.At, Limit: k.text, Source: k.source, Why: k.why, Confidence: k.confidence, LimitK: k.k, ValueK: t.K,
 		MarginK: margin, Uncertainty: u, Verdict: Verdict(word), Touch: k.touch, Lower: k.lower, Conformance: p, Steps: k.steps,
 	}
+}
+
+// uncertainty combines the effects on a temperature with what the limit itself
+// does when the air is shifted by its uncertainty.
+func (k criterion) uncertainty(at string, effects []Effect, air float64) (plus, minus float64) {
+	if k.moves == nil {
+		return combine(effects, at)
+	}
+	var own []Effect
+	for _, e := range effects {
+		if e.At == at && e.Of == ofAir {
+			e.UpK -= k.moves(air)
+			e.DownK -= k.moves(-air)
+		}
+		own = append(own, e)
+	}
+	return combine(own, at)
 }
 
 var severity = map[Verdict]int{None: 0, NotJudged: 1, Pass: 2, ConditionalPass: 3, ConditionalFail: 4, Fail: 5, NoResult: 6}

@@ -243,6 +243,9 @@ type SecondVerdict struct {
 	Limit  string  `json:"limit"`
 	First  Verdict `json:"first"`
 	Second Verdict `json:"second"`
+	ValueK float64 `json:"value_K"` // by the second method
+	LimitK float64 `json:"limit_K"`
+	U      float64 `json:"uncertainty_K"` // of the first method
 }
 
 // Changed lists the checks whose verdict word the second method changes.

@@ -72,11 +72,26 @@ func runLoad(c casefile.Case) LoadOutcome {
 	}
 	l.Verdicts = append(l.Verdicts, judge(c, l.Temps, l.Effects, l.DewPointK)...)
 	l.Verdict = l.worst()
+	l.Notes = append(l.Notes, aboveTheMean(l)...)
 	l.Second = secondMethod(m, l)
 	for _, v := range l.Second.Changed() {
 		l.Notes = append(l.Notes, fmt.Sprintf("second method: %s, %s would be %q instead of %q", v.At, v.Limit, v.Second, v.First))
 	}
 	return l
+}
+
+// aboveTheMean tells when a limit of the inside air is met by the mean but not
+// by the upper zone.
+func aboveTheMean(l LoadOutcome) []string {
+	var list []string
+	for _, v := range l.Verdicts {
+		for _, t := range l.Temps {
+			if v.At == "inside air" && !v.Lower && v.MarginK >= 0 && t.Kind == "zone" && t.K > v.LimitK {
+				list = append(list, fmt.Sprintf("inside air, %s: met by the mean, not by the upper zone; put a limit on the upper zone if parts near the roof need it", v.Limit))
+			}
+		}
+	}
+	return list
 }
 
 // without takes back what was found so far and gives the load case its status:
@@ -124,7 +139,7 @@ func crossCheck(m *model, s balance.Solution) CrossCheck {
 	for i := range s.T {
 		x.MaxDiffK = math.Max(x.MaxDiffK, math.Abs(s.T[i]-d.T[i]))
 	}
-	x.Agrees = d.Status == balance.Converged && x.MaxDiffK <= 1e-6
+	x.Agrees = x.MaxDiffK <= 1e-6
 	return x
 }
 
@@ -194,7 +209,7 @@ func secondMethod(m *model, l LoadOutcome) *SecondMethod {
 	}
 	temps := n.temps(s)
 	for i, v := range judge(m.c, temps, l.Effects, l.DewPointK) {
-		second.Verdicts = append(second.Verdicts, SecondVerdict{At: v.At, Limit: v.Limit, First: l.Verdicts[i].Verdict, Second: v.Verdict})
+		second.Verdicts = append(second.Verdicts, SecondVerdict{At: v.At, Limit: v.Limit, First: l.Verdicts[i].Verdict, Second: v.Verdict, ValueK: v.ValueK, LimitK: v.LimitK, U: v.Uncertainty})
 	}
 	for i, t := range temps {
 		second.Rows = append(second.Rows, SecondRow{At: t.At, FirstK: l.Temps[i].K, K: t.K, DiffK: t.K - l.Temps[i].K})

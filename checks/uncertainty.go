@@ -7,6 +7,7 @@ import (
 
 	"stillair/checks/balance"
 	"stillair/checks/casefile"
+	"stillair/freeconv"
 )
 
 // shift is one input moved up and down by about two standard deviations.
@@ -93,7 +94,7 @@ func filmShifts(c casefile.Case, films []FilmRow) []shift {
 	keys := map[group][]filmKey{}
 	first := map[group]FilmRow{}
 	for _, r := range films {
-		g := group{r.Side, r.MethodID}
+		g := group{r.Side, method(r).ID}
 		if _, seen := first[g]; !seen {
 			first[g] = r
 			order = append(order, g)
@@ -104,11 +105,11 @@ func filmShifts(c casefile.Case, films []FilmRow) []shift {
 	for _, g := range order {
 		row := first[g]
 		size, source := c.Uncertainty.Correlation, notSourced
-		if s := row.Film.Method.Scatter; s > 0 {
+		if s := method(row).Scatter; s > 0 {
 			size = casefile.Quantity{SI: s, Typed: fmt.Sprintf("%.3g %%", 100*s)}
-			source = row.Film.Method.ScatterNote
+			source = method(row).ScatterNote
 		}
-		s := tuned("film "+g.side+", "+row.Method, size, func(t *tuning, f float64) {
+		s := tuned("film "+g.side+", "+method(row).Name, size, func(t *tuning, f float64) {
 			t.film = map[filmKey]float64{}
 			for _, k := range keys[g] {
 				t.film[k] = f
@@ -118,6 +119,15 @@ func filmShifts(c casefile.Case, films []FilmRow) []shift {
 		list = append(list, s)
 	}
 	return list
+}
+
+// method is the record behind a film: the rule where one chose between two laws,
+// since its scatter shifts the film whichever law governs.
+func method(r FilmRow) *freeconv.Correlation {
+	if r.Film.Rule != nil {
+		return r.Film.Rule
+	}
+	return r.Film.Method
 }
 
 // relative shifts by a fraction, absolute by an amount, tuned by a fraction of
@@ -189,7 +199,7 @@ func uncertain(m *model, l *LoadOutcome) error {
 	}
 	l.HeatPlusW, l.HeatMinusW = plus, minus
 	for i := range l.Temps {
-		l.Temps[i].PlusK, l.Temps[i].MinusK = combine(l.Effects, l.Temps[i].At, "")
+		l.Temps[i].PlusK, l.Temps[i].MinusK = combine(l.Effects, l.Temps[i].At)
 	}
 	return nil
 }
@@ -205,17 +215,15 @@ func shifted(m *model, of string, apply func(*casefile.Case, *tuning)) ([]Temp, 
 	return n.temps(s), n.heatShed(s), nil
 }
 
-// combine is the root of the sum of squares of the effects on one temperature,
-// without the effect called skip.
-func combine(effects []Effect, at, skip string) (plus, minus float64) {
+// combine is the root of the sum of squares of the effects on one temperature.
+func combine(effects []Effect, at string) (plus, minus float64) {
 	for _, e := range effects {
-		if e.At != at || e.Of == skip {
-			continue
+		if e.At == at {
+			plus = math.Hypot(plus, math.Max(0, math.Max(e.UpK, e.DownK)))
+			minus = math.Hypot(minus, math.Min(0, math.Min(e.UpK, e.DownK)))
 		}
-		plus += math.Pow(math.Max(0, math.Max(e.UpK, e.DownK)), 2)
-		minus += math.Pow(math.Min(0, math.Min(e.UpK, e.DownK)), 2)
 	}
-	return math.Sqrt(plus), math.Sqrt(minus)
+	return plus, minus
 }
 
 // Ranked lists the effects on one temperature, the largest first.

@@ -267,3 +267,20 @@ func TestCoveredFacesAreAmongTheAssumptions(t *testing.T) {
 		t.Errorf("assumptions: %q", o.Assumptions)
 	}
 }
+
+// The uncertainty of a check is that on the side of the limit: upwards as long
+// as the temperature is below it, downwards once it is above.
+func TestGuardBandIsOnTheSideOfTheLimit(t *testing.T) {
+	effects := []Effect{{At: "x", Of: "a", UpK: 3, DownK: -1}, {At: "x", Of: "b", UpK: 4, DownK: -1}}
+	at := Temp{At: "x", K: 300}
+	for _, c := range []struct {
+		limit float64
+		lower bool
+		want  float64
+	}{{310, false, 5}, {299, false, math.Sqrt2}, {290, true, math.Sqrt2}, {301, true, 5}} {
+		got := criterion{k: c.limit, lower: c.lower}.judge(at, effects, 2).Uncertainty
+		if math.Abs(got-c.want) > 1e-12 {
+			t.Errorf("limit %g K, lower %v: U %.4f K, want %.4f K", c.limit, c.lower, got, c.want)
+		}
+	}
+}

@@ -14,8 +14,8 @@ var largestUp = Correlation{
 	Length:   AreaOverPerimeter, FilmWeight: 0.5, BetaWeight: 0.5,
 	RaMin: 1, RaMax: 1e11, ScatterNote: "none published for the joined laws (5 % about their own data is claimed by Lloyd & Moran, from memory)", Verification: partlyFromMemory,
 	Note: "The branches 0.54 Ra^(1/4) and 0.15 Ra^(1/3) were seen in print, 0.96 Ra^(1/6) is from memory, as are the ranges. " +
-		"The largest of the three counts: they meet at Ra = 1.0e3 and 4.8e6 (published changes 200 and 8e6 or 1e7). The source's 0.59 Ra^(1/4) for " +
-		"200..1e4 is left out, up to 8 % low there.",
+		"The largest of the three counts: they meet at Ra = 1.0e3 and 4.7e6 (published changes 200 and 8e6 or 1e7). The source's 0.59 Ra^(1/4) for " +
+		"200..1e4 is left out, up to 9 % low there.",
 	Nu: func(in Input) float64 {
 		return math.Max(0.96*root6(in.Ra), quarterOrThird(in.Ra, 0.54, 0.15))
 	},

@@ -445,7 +445,7 @@ func (b *builder) uncertainty() {
 		return b.quantity(uncertainty.part(key), b.root.get("uncertainty").get(key), "uncertainty."+key)
 	}
 	b.c.Uncertainty = Uncertainty{Heat: read("heat"), Air: read("air"), Contents: read("contents"), Sun: read("sun"), Humidity: read("humidity"), Correlation: read("correlation"),
-		Emissivity: read("emissivity"), Inside: read("inside"), UpperZone: read("upper zone"), Conductivity: read("conductivity"), Thickness: read("thickness")}
+		Emissivity: read("emissivity"), Absorptance: read("absorptance"), Inside: read("inside"), UpperZone: read("upper zone"), Conductivity: read("conductivity"), Thickness: read("thickness")}
 }
 
 // Half-widths around typed surface properties, stated assumptions.
@@ -465,11 +465,18 @@ func (b *builder) outside() {
 	b.emissivity(p, f, named, path)
 	v := p.value
 	typed := b.quantity(absorptance, v.get("absorptance"), join(path, "absorptance"))
+	u := b.c.Uncertainty.Absorptance
 	switch {
+	case typed.Set && u.Set:
+		b.c.Body.Absorb = aroundTyped(typed, u.SI)
 	case typed.Set:
 		b.c.Body.Absorb = aroundTyped(typed, typedAbsorptance)
+		b.halfWidth("absorptance", typedAbsorptance)
 	case named && f.HasAbsorb:
 		b.c.Body.Absorb = ofFinish(f, v.get("finish"), f.AbsorbLow, f.Absorb, f.AbsorbHigh)
+		if u.Set {
+			b.c.Body.Absorb.around(u.SI)
+		}
 	}
 }
 
@@ -482,6 +489,7 @@ func (b *builder) emissivity(p *pair, f radiation.Finish, named bool, path strin
 		b.c.Body.Emissivity = aroundTyped(typed, u.SI)
 	case typed.Set:
 		b.c.Body.Emissivity = aroundTyped(typed, typedEmissivity)
+		b.halfWidth("emissivity", typedEmissivity)
 	case named:
 		b.c.Body.Finish = f.Name
 		b.c.Body.Emissivity = ofFinish(f, v.get("finish"), f.Low, f.Typical, f.High)
@@ -492,6 +500,13 @@ func (b *builder) emissivity(p *pair, f radiation.Finish, named bool, path strin
 	case v.get("finish") == nil && v.get("emissivity") == nil && !v.meant["finish"] && !v.meant["emissivity"]:
 		b.add("E-410", p.at, path, Finding{Message: "neither a finish nor an emissivity is given", Found: "neither", Expected: "finish: " + finish.example + ", or emissivity: 0.9"})
 	}
+}
+
+// halfWidth lists the assumed half-width around a typed surface property.
+func (b *builder) halfWidth(key string, u float64) {
+	in := uncertainty.part(key)
+	b.list(Input{Path: "uncertainty." + key, Label: in.label, Typed: number(u), SI: number(u),
+		Source: "default: stated assumption around a typed value", Assumption: true})
 }
 
 func aroundTyped(q Quantity, u float64) Range {

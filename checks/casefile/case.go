@@ -137,6 +137,7 @@ type Uncertainty struct {
 	Humidity     Quantity // fraction, of the relative humidity, absolute
 	Correlation  Quantity // fraction of h where no scatter is published
 	Emissivity   Quantity // absolute; Set only when typed, otherwise the finish range is used
+	Absorptance  Quantity // absolute; Set only when typed, otherwise the finish range or 0.10 around a typed one
 	Inside       Quantity // absolute, of Inside.Emissivity
 	UpperZone    Quantity // absolute, of Inside.UpperZone
 	Conductivity Quantity // fraction

@@ -99,6 +99,7 @@ func needed(inputs []Input, cases []Case) []Input {
 		"heat":         func(c Case) bool { return c.Heat.Set },
 		"contents":     func(c Case) bool { return c.Contents.Set },
 		"sun":          func(c Case) bool { return len(c.Surroundings.Sun) > 0 },
+		"absorptance":  func(c Case) bool { return len(c.Surroundings.Sun) > 0 },
 		"inside":       func(c Case) bool { return c.Body.Kind == "box" },
 		"upper zone":   func(c Case) bool { return c.Body.Kind == "box" },
 		"humidity":     func(c Case) bool { return c.Surroundings.Humidity.Set },

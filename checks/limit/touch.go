@@ -31,6 +31,8 @@ type Threshold struct {
 	Source   string   // standards of the rows, as quoted
 	// Confidence is the lowest of the rows used.
 	Confidence string
+
+	derived bool // by interpolation or with a coating
 }
 
 // surface is a material of the touch table.
@@ -160,6 +162,7 @@ func coatingCurve() []knot {
 
 // addCoating raises the threshold of the bare metal to that of coated metal.
 func (t *Threshold) addCoating(low, high, contact float64) (float64, float64) {
+	t.derived = true
 	moreLow, moreHigh := t.interpolate("increment of 50 µm lacquer", coatingCurve(), contact)
 	t.step("Coated metal is taken as bare metal under 50 µm of lacquer, the one coating with published values at more than one contact time: %.1f%s°C + %.1f%sK = %.1f%s°C.", low, space, moreLow, space, low+moreLow, space)
 	return low + moreLow, high + moreHigh
@@ -189,6 +192,7 @@ func (t *Threshold) interpolate(what string, curve []knot, contact float64) (low
 	a := curve[i-1]
 	t.use(a)
 	t.use(b)
+	t.derived = true
 	share := math.Log10(contact/a.time) / math.Log10(b.time/a.time)
 	low = a.low - share*(a.low-b.low)
 	high = a.high - share*(a.high-b.high)
@@ -209,9 +213,16 @@ func (t *Threshold) use(k knot) {
 	t.Rows = append(t.Rows, k.row)
 	t.Confidence = catalogue.LowerConfidence(t.Confidence, k.confidence)
 	if k.row == fromMemory {
-		t.step("The bare-metal value for %s, %s, rests on memory and was not seen in print: low confidence. It is used because it is lower than the interpolation without it.",
-			seconds(k.time), k.value())
+		t.step("The bare-metal value for %s, %s, rests on memory and was not seen in print: low confidence. It is used because it is lower than the interpolation between %s and %s without it, %.1f%s%s.",
+			seconds(k.time), k.value(), seconds(1), seconds(60), withoutMemory(), space, k.unit)
 	}
+}
+
+// withoutMemory is the lower edge for bare metal at 10 s that the published
+// points alone would give.
+func withoutMemory() float64 {
+	a, b := knotOf("BT-bm-1"), knotOf("BT-bm-60")
+	return a.low - (a.low-b.low)*math.Log10(10/a.time)/math.Log10(b.time/a.time)
 }
 
 // second is the other quotation of the thresholds from 1 s to 5 s, which some
@@ -240,7 +251,11 @@ func (t *Threshold) standards() string {
 			names = append(names, e.Standard)
 		}
 	}
-	return strings.Join(names, "; ") + ", burn thresholds (quoted)"
+	how := ", burn threshold as quoted"
+	if t.derived {
+		how = ", burn threshold derived from quoted values"
+	}
+	return strings.Join(names, "; ") + how
 }
 
 func (t *Threshold) step(format string, values ...any) {
