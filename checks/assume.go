@@ -57,7 +57,7 @@ func bodyAssumptions(c casefile.Case) []string {
 func boxAssumptions(c casefile.Case) []string {
 	return []string{
 		fmt.Sprintf("The inside air is one mixed node; the equipment radiates to the walls as if it were at the inside air temperature, with the effective emissivity %s. This inside model rests on published films and on judgement; no measured sealed enclosure with full dimensions was available to validate it.", c.Inside.Emissivity.Typed),
-		fmt.Sprintf("The upper zone is taken as the air outside plus %s times the mean rise of the inside air: an assumed factor without a published source.", c.Inside.UpperZone.Typed),
+		fmt.Sprintf("The upper zone is taken as the air outside plus %s times the mean rise of the inside air, and at the mean where the inside air is cooler than the air outside: an assumed factor without a published source.", c.Inside.UpperZone.Typed),
 		"A limit of the inside air is judged on its mean; the upper zone is hotter and judged only where a limit names it.",
 		"Heat does not spread along the walls from face to face.",
 	}

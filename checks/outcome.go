@@ -115,7 +115,7 @@ type HeatPath struct {
 	To    string  `json:"to"`
 	By    string  `json:"by"` // "convection", "radiation", "conduction", "sun", "source"
 	W     float64 `json:"W"`
-	Share float64 `json:"share"` // of the total heat shed, 0..1; final paths only
+	Share float64 `json:"share"` // of all heat exchanged with air and surroundings, 0..1; final paths only
 	Final bool    `json:"final"` // reaches air or surroundings
 }
 
@@ -224,6 +224,7 @@ type SecondMethod struct {
 	// the second method and the uncertainty of the first.
 	Verdicts []SecondVerdict `json:"verdicts"`
 	Films    []FilmRow       `json:"films"`
+	HeatW    float64         `json:"heat_W"`
 	Methods  []string        `json:"methods"`
 	Rows     []SecondRow     `json:"rows"`
 	Status   Status          `json:"status"`

@@ -32,7 +32,7 @@ func (m *model) temps(s balance.Solution) []Temp {
 }
 
 // heatPaths lists the sources and what flows through every link, with the
-// share of those that reach the air or the surroundings.
+// share of each in what is exchanged with the air and the surroundings.
 func (m *model) heatPaths(s balance.Solution) []HeatPath {
 	var rows []HeatPath
 	if m.c.Heat.Set {
@@ -49,13 +49,13 @@ func (m *model) heatPaths(s balance.Solution) []HeatPath {
 		from, final := m.b.Name(l.From), false
 		if name, ok := owner[i]; ok {
 			from, final = name, true
-			shed += math.Max(s.Heat[i], 0)
+			shed += math.Abs(s.Heat[i])
 		}
 		rows = append(rows, HeatPath{From: from, To: m.b.Name(l.To), By: l.By, W: s.Heat[i], Final: final})
 	}
 	for i := range rows {
 		if rows[i].Final && shed > 0 {
-			rows[i].Share = rows[i].W / shed
+			rows[i].Share = math.Abs(rows[i].W) / shed
 		}
 	}
 	return rows

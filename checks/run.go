@@ -3,6 +3,7 @@ package checks
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"stillair/checks/balance"
 	"stillair/checks/casefile"
@@ -74,10 +75,24 @@ func runLoad(c casefile.Case) LoadOutcome {
 	l.Verdict = l.worst()
 	l.Notes = append(l.Notes, aboveTheMean(l)...)
 	l.Second = secondMethod(m, l)
+	if out := beyond(l.Second.Films); len(out) > 0 {
+		l.Notes = append(l.Notes, fmt.Sprintf("second method: outside its published range on %s; its difference is no measure there", strings.Join(out, ", ")))
+	}
 	for _, v := range l.Second.Changed() {
 		l.Notes = append(l.Notes, fmt.Sprintf("second method: %s, %s would be %q instead of %q", v.At, v.Limit, v.Second, v.First))
 	}
 	return l
+}
+
+// beyond names the films that are outside the range of their correlation.
+func beyond(films []FilmRow) []string {
+	var list []string
+	for _, f := range films {
+		if !f.InRange {
+			list = append(list, f.At+" ("+f.Side+")")
+		}
+	}
+	return list
 }
 
 // aboveTheMean tells when a limit of the inside air is met by the mean but not
@@ -200,8 +215,9 @@ func secondMethod(m *model, l LoadOutcome) *SecondMethod {
 		return second
 	}
 	seen := map[string]bool{}
-	second.Films = n.films(s)
-	for _, f := range second.Films {
+	second.Films, second.HeatW = n.films(s), n.heatShed(s)
+	for i, f := range second.Films {
+		second.Films[i].Why = "second method: another publication for the same situation"
 		if !seen[f.Method] {
 			seen[f.Method] = true
 			second.Methods = append(second.Methods, f.Method)

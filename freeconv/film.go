@@ -3,6 +3,7 @@ package freeconv
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"stillair/geometry"
 )
@@ -28,6 +29,9 @@ func Evaluate(f geometry.Face, s State, choice Choice) Film {
 		film.Rule, film.Laws = o.method, []*Correlation{r.c, o.other.c}
 	}
 	film.RangeNote = rangeNote(r)
+	if gap := slenderGap(&o, &f); film.RangeNote == "" {
+		film.RangeNote = gap
+	}
 	film.InRange = film.RangeNote == ""
 	film.Notes = notes(&o, &f)
 	return film
@@ -136,13 +140,26 @@ func rangeNote(r *result) string {
 	return note
 }
 
+// readable writes a number with its power of ten as people print it: 3.2·10⁹.
+func readable(x float64) string {
+	mantissa, exponent, large := strings.Cut(plain(x), "e")
+	if !large {
+		return mantissa
+	}
+	power := strings.NewReplacer("-", "⁻", "0", "⁰", "1", "¹", "2", "²", "3", "³", "4", "⁴", "5", "⁵", "6", "⁶", "7", "⁷", "8", "⁸", "9", "⁹").Replace(exponent)
+	if mantissa == "1" {
+		return "10" + power
+	}
+	return mantissa + "·10" + power
+}
+
 // outside says by which end x is missed; high 0 means no upper end.
 func outside(symbol string, x, low, high float64, unit string) string {
 	switch {
 	case x < low:
-		return fmt.Sprintf("%s = %s%s is below %s%s, the lower end of the range", symbol, plain(x), unit, plain(low), unit)
+		return fmt.Sprintf("%s = %s%s is below %s%s, the lower end of the range", symbol, readable(x), unit, readable(low), unit)
 	case high > 0 && x > high:
-		return fmt.Sprintf("%s = %s%s is above %s%s, the upper end of the range", symbol, plain(x), unit, plain(high), unit)
+		return fmt.Sprintf("%s = %s%s is above %s%s, the upper end of the range", symbol, readable(x), unit, readable(high), unit)
 	}
 	return ""
 }
@@ -184,13 +201,33 @@ func partName(whole Kind, r *result) string {
 	return "the horizontal part (g sin θ on A/P)"
 }
 
+// slenderGap tells where no published law covers a slender vertical cylinder:
+// the flat-plate law governs, the cylinder is too slender to be a plate, and the
+// slender-cylinder law is beyond its range.
+func slenderGap(o *outcome, f *geometry.Face) string {
+	r := &o.governs
+	if o.kind != VerticalCylinder || !o.method.IsRule() || !r.c.Fits(VerticalPlate) || !(r.gr > 0) {
+		return ""
+	}
+	if f.Diameter >= leastDiameter(r, f) || rangeNote(&o.other) == "" {
+		return ""
+	}
+	return fmt.Sprintf("D is less than 35 L/Gr^(1/4), too slender for a flat plate, and the slender-cylinder law is beyond its range: %s; the flat-plate value is low",
+		rangeNote(&o.other))
+}
+
+// leastDiameter is 35 L/Gr^(1/4) in m.
+func leastDiameter(r *result, f *geometry.Face) float64 {
+	return 35 * f.Height / math.Sqrt(math.Sqrt(r.gr))
+}
+
 // slenderNote is the test D >= 35 L/Gr^(1/4) for treating a vertical cylinder
 // as a flat plate, Sparrow & Gregg 1956, Trans. ASME 78:1823.
 func slenderNote(r *result, f *geometry.Face) string {
 	if !(r.gr > 0) {
 		return "D ≥ 35 L/Gr^(1/4) cannot be tested: Gr = 0"
 	}
-	least := 35 * f.Height / math.Sqrt(math.Sqrt(r.gr))
+	least := leastDiameter(r, f)
 	word, then := "is at least", "the side may be taken as a flat plate"
 	if f.Diameter < least {
 		word, then = "is less than", "the side sheds more than a flat plate"

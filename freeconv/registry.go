@@ -32,7 +32,7 @@ func init() {
 		&inclinedRuleUp, &inclinedRuleDown, &raithbyHollandsInclinedUp, &raithbyHollandsInclinedDown,
 		&richDown, &fujiiImuraInclinedUp, &fujiiImuraInclinedDown,
 		&churchillChuCylinder, &churchillChuCylinderLaminar, &morganCylinder, &kuehnGoldstein, &mcAdamsCylinder,
-		&verticalCylinderRule, &popielCylinder, &lefevreEde,
+		&verticalCylinderRule, &otherVerticalCylinderRule, &popielCylinder, &lefevreEde,
 		&churchillSphere, &yugeSphere, &yovanovichSphere, &yovanovichCube, &yovanovichAny,
 	}
 	for _, c := range records {
@@ -55,7 +55,7 @@ func init() {
 		HorizontalCylinder: {&churchillChuCylinder,
 			"one smooth equation from conduction to turbulence, so that no result jumps at the transition", &morganCylinder},
 		VerticalCylinder: {&verticalCylinderRule,
-			"a thick cylinder is a plate bent round; a slender one loses more, and the larger of both laws has no jump between them", &lefevreEde},
+			"a thick cylinder is a plate bent round; a slender one loses more, and the larger of both laws has no jump between them", &otherVerticalCylinderRule},
 		Sphere: {&churchillSphere,
 			"starts from the exact conduction limit 2 and covers all Ra below 1e11", &yugeSphere},
 		AnyShape: {&yovanovichAny,

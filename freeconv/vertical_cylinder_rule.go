@@ -21,3 +21,21 @@ var verticalCylinderRule = Correlation{
 		return part{VerticalCylinder, byID["churchill-chu-1975-plate"]}, part{VerticalCylinder, byID["popiel-2008-vertical-cylinder"]}
 	},
 }
+
+// The second opinion on a vertical cylinder: the larger of the flat-plate law of
+// McAdams 1954, which reaches into turbulence, and the slender-cylinder law of
+// LeFevre & Ede 1956.
+
+var otherVerticalCylinderRule = Correlation{
+	ID: "mcadams-lefevre-ede-vertical-cylinder", Name: "McAdams 1954 and LeFevre & Ede 1956, vertical cylinder",
+	Kinds:    []Kind{VerticalCylinder},
+	Citation: mcAdamsCitation + "; E. J. LeFevre, A. J. Ede, Proc. 9th Int. Congr. Applied Mechanics, Brussels 1956, vol. 4, 175-183",
+	Equation: `h = \max\left( h_{\mathrm{plate}}, h_{\mathrm{slender}} \right)`,
+	Length:   Height, FilmWeight: 0.5, BetaWeight: 0.5,
+	RaMin: 1e4, RaMax: 1e13, ScatterNote: mcAdamsScatter, Verification: FromMemory,
+	Note: "Joining the two laws by the larger h is a convention of this program: it has no jump. The slender-cylinder law and the ranges are from memory.",
+	Nu:   func(in Input) float64 { return math.Max(mcAdamsVertical.Nu(in), lefevreEde.Nu(in)) },
+	parts: func(Choice) (first, second part) {
+		return part{VerticalCylinder, byID["mcadams-1954-plate"]}, part{VerticalCylinder, byID["lefevre-ede-1956-vertical-cylinder"]}
+	},
+}

@@ -6,6 +6,7 @@ import (
 	"slices"
 	"strconv"
 	"strings"
+	"time"
 
 	"stillair/checks/material"
 	"stillair/checks/unit"
@@ -70,6 +71,7 @@ func (b *builder) head() {
 	b.c.Note = Note{Number: n.textOf("number"), Revision: n.textOf("revision"), Project: n.textOf("project"), Client: n.textOf("client"),
 		Status: n.textOf("status"), Prepared: n.textOf("prepared"), Checked: n.textOf("checked"), Approved: n.textOf("approved"),
 		Date: n.textOf("date"), Reason: n.textOf("reason"), Purpose: n.textOf("purpose"), Owner: n.textOf("owner")}
+	b.noteDate(n.get("date"))
 	b.c.Units = t("units")
 	if b.c.Units == "" {
 		b.c.Units = description.part("units").usual
@@ -127,6 +129,9 @@ func (v *value) source() string {
 // plainSI writes a value in the coherent SI unit with six digits.
 func plainSI(k unit.Kind, si float64) string {
 	digits := strconv.FormatFloat(si, 'g', 6, 64)
+	if strings.Contains(digits, "e+") {
+		digits = strconv.FormatFloat(si, 'f', -1, 64)
+	}
 	if u := k.SIUnit(); u != "" {
 		return digits + unit.NoBreak + u
 	}
@@ -412,6 +417,16 @@ func (b *builder) drive() {
 			Help: "heat is what the body must shed; contents is the temperature it is held at"})
 	case h == nil && t == nil && !b.root.meant["heat"] && !b.root.meant["contents"]:
 		b.add("E-208", b.top(), "heat", Finding{Message: "neither heat nor contents is given", Found: "neither", Expected: "heat: 250 W or contents: 184 °C"})
+	}
+}
+
+// noteDate refuses a date that no calendar has.
+func (b *builder) noteDate(v *value) {
+	if v == nil || v.bad || v.shape != scalar || strings.TrimSpace(v.text) == "" {
+		return
+	}
+	if _, err := time.Parse(time.DateOnly, strings.TrimSpace(v.text)); err != nil {
+		b.add("E-303", v.at, "note.date", Finding{Message: "the date of the note is no date", Found: quote(v.text), Expected: "year-month-day, such as 2026-11-30"})
 	}
 }
 

@@ -47,7 +47,7 @@ func (f Finding) format(w io.Writer, paint func(code, s string) string) {
 	fmt.Fprintf(w, "%s %s %s\n", paint(bold, place), paint(hue, kind+" "+f.Code+":"), visible(f.Message))
 	if strings.TrimSpace(f.Source) != "" {
 		line, before := f.excerpt()
-		fmt.Fprintf(w, "%5d | %s\n      | %s%s\n", f.Line, line, strings.Repeat(" ", before), paint(hue, strings.Repeat("^", f.Width)))
+		fmt.Fprintf(w, "%5d | %s\n      | %s%s\n", f.Line, line, strings.Repeat(" ", before), paint(hue, strings.Repeat("^", min(f.Width, excerptWidth))))
 	}
 	say := func(label, s string) {
 		if s != "" {

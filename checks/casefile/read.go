@@ -114,12 +114,15 @@ func needed(inputs []Input, cases []Case) []Input {
 // AsDescribed names the load case of a file without loads.
 const AsDescribed = "as described"
 
+// longestExcerpt is the longest source line, in bytes, that a finding repeats.
+const longestExcerpt = 1000
+
 // add makes a finding with its place and source line, once.
 func (r *reader) add(code string, at place, path string, f Finding) {
 	f.Code, f.Severity = code, severityOf(code)
 	f.File, f.Path = r.name, path
 	f.Line, f.Column, f.Width = max(1, at.line), max(1, at.column), max(1, at.width)
-	if f.Line <= len(r.lines) {
+	if f.Line <= len(r.lines) && len(r.lines[f.Line-1]) <= longestExcerpt {
 		f.Source = r.lines[f.Line-1]
 	}
 	id := fmt.Sprint(f.Code, f.Line, f.Column, f.Path, f.Found)

@@ -233,3 +233,14 @@ func TestOneSlipOneFinding(t *testing.T) {
 		}
 	}
 }
+
+// A date that no calendar has is refused where it stands.
+func TestDateOfTheNote(t *testing.T) {
+	text := "title: x\nnote: {date: %s}\nsurroundings: {air: 20 °C}\nbody: {sphere: {diameter: 60 mm, emissivity: 0.9}}\nheat: 1 W\n"
+	for date, good := range map[string]bool{"2026-11-30": true, "2028-02-29": true, "2026-02-29": false, "2026-13-45": false, "30.11.2026": false} {
+		_, findings := Read("a.yaml", []byte(strings.Replace(text, "%s", date, 1)), Defaults{})
+		if HasErrors(findings) == good {
+			t.Errorf("date %s: %s", date, formatted(findings))
+		}
+	}
+}

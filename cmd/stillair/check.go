@@ -102,7 +102,7 @@ func (a *app) warn(out *checks.Outcome) {
 func (a *app) render(out *checks.Outcome, opt checkOptions) ([]byte, error) {
 	if opt.json {
 		a.warn(out)
-		data, err := marshal(out)
+		data, err := checks.JSON(out)
 		if err != nil {
 			return nil, fmt.Errorf("the result cannot be written as JSON: %w", err)
 		}

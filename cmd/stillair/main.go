@@ -5,16 +5,16 @@ package main
 
 import (
 	"cmp"
-	"encoding/json"
 	"fmt"
 	"io"
 	"os"
 	"os/signal"
 	"slices"
-	"strings"
 	"syscall"
 
 	"golang.org/x/term"
+
+	"stillair/checks"
 )
 
 func main() { os.Exit(run(os.Args[1:])) }
@@ -132,7 +132,7 @@ func errorJSON(f *failure) []byte {
 		Help     string    `json:"help,omitempty"`
 		Findings []finding `json:"findings"`
 	}
-	data, err := marshal(struct {
+	data, err := checks.JSON(struct {
 		Schema string `json:"schema"`
 		Error  body   `json:"error"`
 	}{resultSchema, body{f.kind, f.exit, f.message, f.help, findingsJSON(f.findings)}})
@@ -140,17 +140,4 @@ func errorJSON(f *failure) []byte {
 		return []byte("{}\n")
 	}
 	return data
-}
-
-// marshal writes JSON for people to read as well: indented, no escapes for <
-// and >.
-func marshal(v any) ([]byte, error) {
-	var b strings.Builder
-	e := json.NewEncoder(&b)
-	e.SetEscapeHTML(false)
-	e.SetIndent("", "  ")
-	if err := e.Encode(v); err != nil {
-		return nil, err
-	}
-	return []byte(b.String()), nil
 }

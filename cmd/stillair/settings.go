@@ -51,7 +51,7 @@ var allSettings = []setting{
 	{key: "logo", help: "PNG picture for the head of the note", isFile: true},
 	{key: "paper", def: "A4", help: "paper of the note: A4 or Letter", values: []string{"A4", "Letter"}},
 	{key: "air", help: "air temperature for cases that give none, e.g. 40 °C", isQuantity: true, quantity: unit.Temperature},
-	{key: "radiant", help: "radiant temperature for cases that give none", isQuantity: true, quantity: unit.Temperature},
+	{key: "radiant", help: "radiant temperature for cases that give no air", isQuantity: true, quantity: unit.Temperature},
 	{key: "altitude", help: "altitude for cases that give neither altitude nor pressure, e.g. 120 m", isQuantity: true, quantity: unit.Altitude},
 }
 

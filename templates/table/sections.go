@@ -71,7 +71,7 @@ func (p *page) compareRow(l *checks.LoadOutcome, inside bool) []string {
 	hot, at := p.hottest(l)
 	heat := ""
 	if l.Status == checks.Converged {
-		heat = number(p.value(unit.Power, l.HeatW), 1)
+		heat = number(p.value(unit.Power, l.HeatW), decimalsOf(p.value(unit.Power, l.HeatW)))
 	}
 	row = append(row, hot, at, heat)
 	j := l.Deciding()
@@ -173,10 +173,11 @@ func (p *page) loss(l *checks.LoadOutcome) {
 	if l.Status != checks.Converged {
 		return
 	}
-	w := func(v float64) string { return number(p.value(unit.Power, v), 1) }
+	d := decimalsOf(p.value(unit.Power, l.HeatW))
+	w := func(v float64) string { return number(p.value(unit.Power, v), d) }
 	text := fmt.Sprintf("%s %s (- %s, + %s)", w(l.HeatW), p.unit(unit.Power), w(l.HeatMinusW), w(l.HeatPlusW))
 	if l.HeatPerM != 0 {
-		text += ", that is " + p.opt.Units.Show(unit.HeatPerLength, l.HeatPerM, 1)
+		text += ", that is " + p.opt.Units.Show(unit.HeatPerLength, l.HeatPerM, decimalsOf(p.value(unit.HeatPerLength, l.HeatPerM)))
 	}
 	p.say("  heat shed: ", text)
 }
@@ -187,6 +188,23 @@ func conductivity(k float64) string {
 		return number(k, 1)
 	}
 	return number(k, 4)
+}
+
+// decimalsOf is one decimal, or as many as show three digits of a small number.
+func decimalsOf(v float64) int {
+	v = math.Abs(v)
+	if v == 0 || v >= 10 {
+		return 1
+	}
+	return min(2-int(math.Floor(math.Log10(v))), 12)
+}
+
+// lengthDecimals shows tenths of a millimetre or thousandths of an inch.
+func (p *page) lengthDecimals() int {
+	if p.opt.Units == unit.US {
+		return 3
+	}
+	return 1
 }
 
 // layers shows the conduction through walls and layers of a lagged body, or of
@@ -204,7 +222,7 @@ func (p *page) layers(l *checks.LoadOutcome) {
 		if !y.InRange {
 			inRange = "OUTSIDE"
 		}
-		g.add(clean(y.At), y.Place, number(p.value(unit.Length, y.ThicknessM), 1), conductivity(p.value(unit.Conductivity, y.K)),
+		g.add(clean(y.At), y.Place, number(p.value(unit.Length, y.ThicknessM), p.lengthDecimals()), conductivity(p.value(unit.Conductivity, y.K)),
 			number(p.value(unit.Temperature, y.InnerK), 1), number(p.value(unit.Temperature, y.OuterK), 1), clean(y.Material), inRange)
 	}
 	p.grid(g)
@@ -239,14 +257,18 @@ func (p *page) heat(l *checks.LoadOutcome) {
 	if len(l.Heat) == 0 {
 		return
 	}
-	p.heading("  Heat paths (share of the heat that reaches air and surroundings)")
+	p.heading("  Heat paths (share of the heat exchanged with air and surroundings)")
 	g := newGrid("by", "."+p.unit(unit.Power), ".share %", "path")
+	most := 0.0
+	for _, h := range l.Heat {
+		most = math.Max(most, math.Abs(p.value(unit.Power, h.W)))
+	}
 	for _, h := range l.Heat {
 		share := ""
 		if h.Final {
 			share = number(100*h.Share, 1)
 		}
-		g.add(h.By, number(p.value(unit.Power, h.W), 1), share, clean(h.From+" → "+h.To))
+		g.add(h.By, number(p.value(unit.Power, h.W), decimalsOf(most)), share, clean(h.From+" → "+h.To))
 	}
 	p.grid(g)
 }
@@ -263,7 +285,7 @@ func (p *page) films(l *checks.LoadOutcome) {
 		if !f.InRange {
 			inRange = "OUTSIDE"
 		}
-		g.add(clean(f.At), f.Side, f.MethodID, number(p.value(unit.Length, f.LengthM), 1),
+		g.add(clean(f.At), f.Side, f.MethodID, number(p.value(unit.Length, f.LengthM), p.lengthDecimals()),
 			power(f.Ra), number(f.Nu, 2), number(p.value(unit.Coefficient, f.H), 2), inRange)
 	}
 	p.grid(g)
@@ -416,6 +438,9 @@ func (p *page) second(l *checks.LoadOutcome) {
 	if len(g.rows) > 1 {
 		p.grid(g)
 	}
+	d := decimalsOf(p.value(unit.Power, l.HeatW))
+	p.say("  ", fmt.Sprintf("heat shed: %s %s by the first, %s %s by the second", number(p.value(unit.Power, l.HeatW), d), p.unit(unit.Power),
+		number(p.value(unit.Power, s.HeatW), d), p.unit(unit.Power)))
 }
 
 // times counts iterations in words.
