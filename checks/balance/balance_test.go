@@ -157,3 +157,17 @@ func BenchmarkSolveSixWalls(b *testing.B) {
 		n.Solve()
 	}
 }
+
+// Thermocouple bead in 20 °C air (h = 75 W/(m²·K)) between walls at 100 °C, all
+// black: 28.4 °C. Lienhard & Lienhard, A Heat Transfer Textbook, 3rd ed.,
+// Example 1.5 (open transcription of the book's worked example).
+func TestThermocoupleBeadPublished(t *testing.T) {
+	b := New(293)
+	air, walls, bead := b.Fixed("air", 293), b.Fixed("walls", 373), b.Unknown("bead")
+	b.Connect(bead, air, "convection", conduction(75))
+	b.Connect(bead, walls, "radiation", radiation(1))
+	s := b.Solve()
+	if s.Status != Converged || math.Abs(s.T[bead]-273-28.4) > 0.05 {
+		t.Errorf("%s, bead at %.2f °C, published 28.4 °C", s.Status, s.T[bead]-273)
+	}
+}
