@@ -52,8 +52,12 @@ func (a *app) note(cmd *cobra.Command, path, output string) error {
 	}
 	a.warn(out)
 	var pdf bytes.Buffer
-	if err := calcnote.Write(&pdf, out, calcnote.Options{Company: s.Company, Logo: s.logo, Paper: s.Paper}); err != nil {
+	var replaced []string
+	if err := calcnote.Write(&pdf, out, calcnote.Options{Company: s.Company, Logo: s.logo, Paper: s.Paper, Replaced: &replaced}); err != nil {
 		return fmt.Errorf("the note cannot be made: %w", err)
+	}
+	if len(replaced) > 0 {
+		fmt.Fprintf(a.err, "warning: the font of the note lacks %s; a replacement mark stands there.\n", strings.Join(replaced, ", "))
 	}
 	if err := a.deliver(out, pdf.Bytes(), output); err != nil {
 		return err

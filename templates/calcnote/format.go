@@ -9,17 +9,28 @@ import (
 
 	"stillair/checks"
 	"stillair/checks/unit"
+	"stillair/templates/drawing"
 	"stillair/templates/pdf"
 )
 
 // notComputed stands where a number is missing; never a zero, never a blank.
 const notComputed = unit.NotComputed
 
-func (n *note) temp(k float64) string  { return n.show(unit.Temperature, k, 1) }
-func (n *note) diff(k float64) string  { return n.show(unit.TemperatureDifference, k, 1) }
-func (n *note) watts(w float64) string { return n.show(unit.Power, w, 1) }
-func (n *note) tempUnit() string       { return n.sys.Unit(unit.Temperature) }
-func (n *note) diffUnit() string       { return n.sys.Unit(unit.TemperatureDifference) }
+func (n *note) temp(k float64) string { return n.show(unit.Temperature, k, 1) }
+func (n *note) diff(k float64) string { return n.show(unit.TemperatureDifference, k, 1) }
+
+// watts is a heat beside others of which the largest is given.
+func (n *note) watts(w, largest float64) string {
+	return minus(drawing.HeatText(n.sys, unit.Power, w, largest))
+}
+
+// bareWatts is watts without the unit.
+func (n *note) bareWatts(w, largest float64) string {
+	return strings.TrimSuffix(n.watts(w, largest), unit.NoBreak+n.sys.Unit(unit.Power))
+}
+
+func (n *note) tempUnit() string { return n.sys.Unit(unit.Temperature) }
+func (n *note) diffUnit() string { return n.sys.Unit(unit.TemperatureDifference) }
 
 // show is Show with the minus sign of the note.
 func (n *note) show(k unit.Kind, si float64, decimals int) string {
@@ -133,16 +144,18 @@ func short(x float64) string {
 	return m + "·" + power
 }
 
-var powerOfTen = regexp.MustCompile(`\b(\d+(?:\.\d+)?)e(-?\d{1,2})\b`)
+var powerOfTen = regexp.MustCompile(`\b(\d+(?:\.\d+)?)e([+-]?\d{1,3})\b`)
 
 // powers writes 1e9 as 10⁹ in running text.
 func powers(s string) string {
 	return powerOfTen.ReplaceAllStringFunc(s, func(m string) string {
-		mantissa, exp, _ := strings.Cut(m, "e")
+		mantissa, e, _ := strings.Cut(m, "e")
+		exp, _ := strconv.Atoi(e)
+		power := "10" + superscript(strconv.Itoa(exp))
 		if mantissa == "1" {
-			return "10" + superscript(exp)
+			return power
 		}
-		return mantissa + "·10" + superscript(exp)
+		return mantissa + "·" + power
 	})
 }
 

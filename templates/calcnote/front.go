@@ -238,8 +238,27 @@ func (n *note) burnCaution() []pdf.Run {
 	if !n.burnJudged() {
 		about = noBurnThreshold
 	}
+	if n.uncertainThreshold() {
+		about += " " + lowConfidence
+	}
 	return []pdf.Run{{Text: about + " Local hot spots are hotter than the mean of a face. " + limit.CautionHead + " See "},
 		{Text: "section\u00A0" + number, Link: key}, {Text: "."}}
+}
+
+// lowConfidence stands beside verdicts on thresholds of low confidence.
+const lowConfidence = "The threshold rests partly on memory or interpolation: confirm it in the standard before relying on the verdict."
+
+// uncertainThreshold tells whether a burn threshold of low confidence was
+// judged.
+func (n *note) uncertainThreshold() bool {
+	for _, l := range n.o.Loads {
+		for _, v := range ofKind(l, kindBurn) {
+			if v.Confidence == "low" {
+				return true
+			}
+		}
+	}
+	return false
 }
 
 // sectionOf finds a section by its title, once the contents are known.
@@ -319,12 +338,26 @@ func shortSource(s string) string {
 	s = tidySource(s)
 	if r := []rune(s); len(r) > enough {
 		head, _, _ := strings.Cut(s, "; ")
-		if r = []rune(head); len(r) > enough {
-			return strings.TrimRight(string(r[:enough]), " ") + "…"
+		if r = []rune(head); len(r) <= enough && balanced(head) {
+			return head
 		}
-		return head
+		return cutSource(string(r[:min(enough, len(r))]))
 	}
 	return s
+}
+
+func balanced(s string) bool { return strings.Count(s, "(") == strings.Count(s, ")") }
+
+// cutSource ends the beginning of a citation before a bracket that it would
+// leave open, or after a whole word.
+func cutSource(s string) string {
+	if i := strings.LastIndex(s, "("); i > 0 && !balanced(s) {
+		return strings.TrimRight(s[:i], " ,:;")
+	}
+	if i := strings.LastIndex(s, " "); i > 0 {
+		s = s[:i]
+	}
+	return strings.TrimRight(s, " ,:;") + "…"
 }
 
 // limitText is a limit in words with its value when the words do not have it.
@@ -428,7 +461,7 @@ func (n *note) contents() {
 func (n *note) conventions() string {
 	s := "Results in SI units"
 	if n.sys == unit.US {
-		s = "Results in US customary units, worked surfaces in SI units"
+		s = "Results in US customary units, worked surfaces in SI units; heats stay in W, and the iteration record, the solver and typed shifts in SI units"
 	}
 	return s + "; decimal point; groups of three digits set apart by a thin space; ± U is about two standard deviations, rounded up."
 }

@@ -46,6 +46,9 @@ func (n *note) boundaries() []boundary {
 		{"Change with time", no, "Steady state: every temperature is the one reached when nothing changes any more."},
 		{"Local hot spots, thermal bridges, vents, flanges, supports", no, "Faces are isothermal at their mean temperature; see the cautions."},
 	}
+	if n.loadsWith(coveredNeighbour) != "" {
+		list[5].how = "Only the radiant temperature given; covered neighbours shed no heat."
+	}
 	if b := n.o.Loads[0].Case.Body; b.Wall != nil || len(b.Layers) > 0 {
 		list[2] = boundary{list[2].what, yes, "Fourier's law, layer by layer, across the layers only."}
 	}
@@ -53,12 +56,26 @@ func (n *note) boundaries() []boundary {
 		list[4] = boundary{"Sun", yes, "Irradiance per face as typed, times the solar absorptance; in load case " + names + "."}
 	}
 	if names := n.loadsWith(func(c casefile.Case) bool { return len(c.Surroundings.Sees) > 0 }); names != "" {
-		list[5] = boundary{list[5].what, "in part", "Single faces see a radiant temperature of their own; in load case " + names + "."}
+		how := "Single faces see a radiant temperature of their own; in load case " + names + "."
+		if n.loadsWith(coveredNeighbour) != "" {
+			how += " Covered neighbours shed no heat."
+		}
+		list[5] = boundary{list[5].what, "in part", how}
 	}
 	if names := n.loadsWith(func(c casefile.Case) bool { return c.Surroundings.Humidity.Set }); names != "" {
 		list[6] = boundary{list[6].what, yes, "Dew point of the air around, compared with the faces; in load case " + names + "."}
 	}
 	return list
+}
+
+// coveredNeighbour tells whether a face stands against a neighbour.
+func coveredNeighbour(c casefile.Case) bool {
+	for _, reason := range c.Body.Covered {
+		if reason == "neighbour" {
+			return true
+		}
+	}
+	return false
 }
 
 func (n *note) loadsWith(has func(casefile.Case) bool) string {
@@ -127,7 +144,7 @@ func siOf(in casefile.Input) string {
 	if in.SI == in.Typed && !strings.ContainsAny(in.SI, "0123456789") {
 		return ""
 	}
-	return minus(in.SI)
+	return minus(powers(in.SI))
 }
 
 // purposes says what the purpose of a load case decides.

@@ -2,6 +2,7 @@ package calcnote
 
 import (
 	"fmt"
+	"math"
 	"slices"
 	"strings"
 
@@ -24,6 +25,7 @@ const (
 	formulaBalance    = `\sum Q_\mathrm{in} = \sum Q_\mathrm{out}`
 	formulaUpper      = `T_\mathrm{upper} = T_\mathrm{a} + f \left(T_\mathrm{inside} - T_\mathrm{a}\right)`
 	formulaPressure   = `H = \frac{6356766\,z}{6356766 + z}, \quad T_H = 288.15 - 0.0065\,H, \quad p = 101325 \left(\frac{T_H}{288.15}\right)^{5.25588}`
+	formulaDewPoint   = `\gamma = \ln \varphi + \frac{17.625\,t_\mathrm{a}}{243.04 + t_\mathrm{a}}, \quad t_\mathrm{d} = \frac{243.04\,\gamma}{17.625 - \gamma}`
 	formulaCombine    = `U_{+} = \sqrt{\sum_i \max\left(0, \Delta_i\right)^2}, \quad U_{-} = \sqrt{\sum_i \min\left(0, \Delta_i\right)^2}`
 )
 
@@ -106,11 +108,60 @@ func (n *note) balanceEquations() {
 		n.conductionEquations(b.Kind)
 	}
 	if c.Body.Kind == "box" {
-		n.textf("Upper zone of the inside air, with the assumed factor f = %s:", orNone(c.Inside.UpperZone.Typed))
+		n.textf("Upper zone of the inside air, with the assumed factor f = %s. The factor applies to a rise; where the inside air is cooler than the air outside, the upper zone is taken at its mean:", orNone(c.Inside.UpperZone.Typed))
 		n.formula(formulaUpper)
 	}
+	n.dewPoint()
 	n.uncertaintyEquations()
 }
+
+// dewPoint prints the Magnus formula and works it out for each state of the
+// air.
+func (n *note) dewPoint() {
+	var lines []string
+	for _, l := range n.o.Loads {
+		if s := l.Case.Surroundings; s.Humidity.Set && l.DewPointK > 0 {
+			for _, line := range dewPointLines(s.Air.SI, s.Humidity.SI, l.DewPointK) {
+				if !slices.Contains(lines, line) {
+					lines = append(lines, line)
+				}
+			}
+		}
+	}
+	if len(lines) == 0 {
+		return
+	}
+	n.runs(pdf.Run{Text: "Dew point "}, inline(`t_\mathrm{d}`), pdf.Run{Text: " of air at "}, inline(`t_\mathrm{a}`), pdf.Run{Text: ", both in °C, with the relative humidity "}, inline(`\varphi`),
+		pdf.Run{Text: " (Magnus form of Alduchov & Eskridge 1996; coefficients from memory):"})
+	n.formula(formulaDewPoint, dewPointSource)
+	for _, line := range lines {
+		n.display(line, "")
+	}
+}
+
+// dewPointLines is the dew point with numbers in it.
+func dewPointLines(air, humidity, dew float64) []string {
+	t, d := air-zeroCelsius, dew-zeroCelsius
+	if !(humidity > 0) || t <= -243 {
+		return nil
+	}
+	gamma := math.Log(humidity) + 17.625*t/(243.04+t)
+	return []string{
+		fmt.Sprintf(`\gamma = \ln\left(%s\right) + \frac{17.625 \times %s}{243.04 + %[2]s} = %s`, exactTeX(humidity), signed(t), digits(gamma, 6)),
+		fmt.Sprintf(`t_\mathrm{d} = \frac{243.04 \times %s}{17.625 - %[1]s} = %s\ \mathrm{°C}`, bracketed(digits(gamma, 6)), digits(d, 4)),
+	}
+}
+
+// bracketed puts brackets around a negative number in a formula.
+func bracketed(number string) string {
+	if strings.HasPrefix(number, "-") {
+		return `\left(` + number + `\right)`
+	}
+	return number
+}
+
+// zeroCelsius is 0 °C in kelvin.
+const zeroCelsius = 273.15
 
 func (n *note) conductionEquations(kind string) {
 	text := "Conduction through a layer with the mean conductivity between its two sides"
@@ -253,7 +304,7 @@ func quantities(src string) string {
 func correlationFacts(u *usage) [][2]string {
 	m := u.method
 	return [][2]string{
-		{"Length", string(m.Length)},
+		{"Length", lengthRule(m)},
 		{"Property temperature", "$" + weighted(m.FilmWeight, `T`) + betaNote(m)},
 		{"Range of the source", rangeOf(m)},
 		{"Published scatter", scatterOf(m)},
@@ -262,6 +313,22 @@ func correlationFacts(u *usage) [][2]string {
 		{"Why this one", capital(strings.Join(u.whys, "; "))},
 		{"Note", m.Note},
 	}
+}
+
+// lengthRule is the rule for the characteristic length in words.
+func lengthRule(m *freeconv.Correlation) string {
+	inclined := m.Fits(freeconv.InclinedUp) || m.Fits(freeconv.InclinedDown)
+	switch {
+	case m.IsRule() && inclined:
+		return "that of the law that governs: slope length in the vertical law, A/P in the horizontal law"
+	case m.IsRule():
+		return "that of the law that governs"
+	case m.Length == freeconv.Height && inclined:
+		return "slope length"
+	case m.Length == freeconv.Height && m.Fits(freeconv.VerticalPlate):
+		return "height; slope length on an inclined plate"
+	}
+	return string(m.Length)
 }
 
 // weighted is Ta + w (Ts - Ta) as a formula.

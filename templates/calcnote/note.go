@@ -8,7 +8,6 @@
 package calcnote
 
 import (
-	"encoding/json"
 	"fmt"
 	"io"
 	"strings"
@@ -25,6 +24,10 @@ type Options struct {
 	Company string
 	Logo    []byte // PNG or JPEG
 	Paper   string // "A4" (default) or "Letter"
+
+	// Replaced, where set, gets the characters that the fonts could not print,
+	// by code point and count: "U+65E5 (2)".
+	Replaced *[]string
 }
 
 // Write writes the note of an outcome.
@@ -32,13 +35,19 @@ func Write(w io.Writer, o *checks.Outcome, opt Options) error {
 	if o == nil || len(o.Loads) == 0 {
 		return fmt.Errorf("calculation note: there is no load case to report")
 	}
-	results, err := json.MarshalIndent(o, "", "  ")
+	results, err := checks.JSON(o)
 	if err != nil {
 		return fmt.Errorf("calculation note: the results cannot be written as JSON: %w", err)
 	}
 	r, err := build(o, opt, results)
 	if err != nil {
 		return fmt.Errorf("calculation note: %w", err)
+	}
+	if opt.Replaced != nil {
+		*opt.Replaced = nil
+		for _, c := range r.Replaced {
+			*opt.Replaced = append(*opt.Replaced, c.String())
+		}
 	}
 	_, err = w.Write(r.Bytes)
 	return err

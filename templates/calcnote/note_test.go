@@ -203,7 +203,7 @@ func TestBookmarksPointAtTheirPages(t *testing.T) {
 func TestAttachmentsComeBack(t *testing.T) {
 	o := outcome(t, "steam-pipe")
 	doc := write(t, o, Options{})
-	results, err := json.MarshalIndent(o, "", "  ")
+	results, err := checks.JSON(o)
 	if err != nil {
 		t.Fatal(err)
 	}

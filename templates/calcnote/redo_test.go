@@ -29,6 +29,9 @@ func TestWorkedLinesCanBeRedone(t *testing.T) {
 					all = append(all, strings.Split(line, `, \quad `)...)
 				}
 			}
+			if s := o.Loads[i].Case.Surroundings; s.Humidity.Set {
+				all = append(all, dewPointLines(s.Air.SI, s.Humidity.SI, o.Loads[i].DewPointK)...)
+			}
 			for _, src := range all {
 				if redo(t, name, src) {
 					lines++

@@ -50,11 +50,12 @@ func (r *references) sourceMark(source string) string {
 
 // Sources of what the note itself says.
 const (
-	gumSource     = "JCGM 100:2008, Evaluation of measurement data - Guide to the expression of uncertainty in measurement (GUM), 5.1.2 and 7.2.6."
-	ilacSource    = "ILAC-G8:09/2019, Guidelines on decision rules and statements of conformity, 4.2.3."
-	jcgm106Source = "JCGM 106:2012, Evaluation of measurement data - The role of measurement uncertainty in conformity assessment."
-	sigmaSource   = "CODATA 2018: E. Tiesinga, P. J. Mohr, D. B. Newell, B. N. Taylor, Rev. Mod. Phys. 93 (2021) 025010; Stefan-Boltzmann constant."
-	gravitySource = "3rd General Conference on Weights and Measures, 1901: conventional acceleration of free fall."
-	fourierSource = "Fourier's law integrated over the layer, e.g. F. P. Incropera et al., Fundamentals of Heat and Mass Transfer, 6th ed. 2007, Table 3.3."
-	atmosphere    = "U.S. Standard Atmosphere, 1976, NOAA/NASA/USAF, Washington 1976."
+	gumSource      = "JCGM 100:2008, Evaluation of measurement data - Guide to the expression of uncertainty in measurement (GUM), 5.1.2 and 7.2.6."
+	ilacSource     = "ILAC-G8:09/2019, Guidelines on decision rules and statements of conformity, 4.2.3."
+	jcgm106Source  = "JCGM 106:2012, Evaluation of measurement data - The role of measurement uncertainty in conformity assessment."
+	sigmaSource    = "CODATA 2018: E. Tiesinga, P. J. Mohr, D. B. Newell, B. N. Taylor, Rev. Mod. Phys. 93 (2021) 025010; Stefan-Boltzmann constant."
+	gravitySource  = "3rd General Conference on Weights and Measures, 1901: conventional acceleration of free fall."
+	fourierSource  = "Fourier's law integrated over the layer, e.g. F. P. Incropera et al., Fundamentals of Heat and Mass Transfer, 6th ed. 2007, Table 3.3."
+	dewPointSource = "dew point by the Magnus formula of Alduchov & Eskridge 1996, J. Appl. Meteor. 35:601-609 (coefficients from memory)"
+	atmosphere     = "U.S. Standard Atmosphere, 1976, NOAA/NASA/USAF, Washington 1976."
 )

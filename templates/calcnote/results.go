@@ -2,6 +2,7 @@ package calcnote
 
 import (
 	"fmt"
+	"math"
 	"slices"
 	"strings"
 
@@ -196,7 +197,8 @@ func (n *note) temperatureCell(l checks.LoadOutcome, at string) pdf.Cell {
 
 const (
 	sunMode   = "sun taken in"
-	totalMode = "net heat shed by the body"
+	totalMode = "heat shed by the body"
+	netMode   = "net heat shed by the body"
 )
 
 func (n *note) modes() []string {
@@ -209,7 +211,7 @@ func (n *note) modes() []string {
 		return names
 	})
 	if n.loadsWith(hasSun) != "" {
-		list = append(list, sunMode)
+		return append(list, sunMode, netMode)
 	}
 	return append(list, totalMode)
 }
@@ -224,13 +226,34 @@ func (n *note) modeCell(l checks.LoadOutcome, mode string) pdf.Cell {
 			sum, found = sum+h.W, true
 		}
 	}
-	if mode == totalMode {
-		return pdf.Cell{Runs: pdf.T(n.bare(unit.Power, l.HeatW, 1)), Face: pdf.Bold}
+	if mode == totalMode || mode == netMode {
+		return pdf.Cell{Runs: pdf.T(n.bareWatts(l.HeatW, shedScale(l, n.largestHeat()))), Face: pdf.Bold}
 	}
 	if !found {
 		return pdf.C("–")
 	}
-	return pdf.C(n.bare(unit.Power, sum, 1))
+	return pdf.C(n.bareWatts(sum, n.largestHeat()))
+}
+
+// largestHeat is the largest heat flow of all load cases, W; it sets the
+// decimals of tables of heats.
+func (n *note) largestHeat() float64 {
+	most := 0.0
+	for _, l := range n.o.Loads {
+		most = math.Max(most, throughput(l))
+	}
+	return most
+}
+
+// throughput is the largest heat flow of a load case, W.
+func throughput(l checks.LoadOutcome) float64 {
+	most := math.Abs(l.HeatW)
+	for _, h := range l.Heat {
+		if h.Final || h.By == "sun" {
+			most = math.Max(most, math.Abs(h.W))
+		}
+	}
+	return most
 }
 
 func (n *note) filmPlaces() []string {

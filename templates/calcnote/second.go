@@ -19,14 +19,76 @@ func (n *note) second() {
 		n.text("Not computed for the governing load case.")
 		return
 	}
-	n.textf("The same balance of load case “%s” with another published correlation on every face. The difference shows how far sound methods disagree; it is not an error of either.", n.load().Name)
-	for _, a := range n.changedAnswers() {
-		n.text(a)
-	}
+	n.textf("The same balance of load case “%s” with another published correlation on every face. The difference shows how far the two published sets disagree; it is not an error of either.", n.load().Name)
+	n.secondOutside()
+	n.secondChanges()
 	n.secondRows(s)
 	n.otherSecond()
-	n.secondMethods(s)
+	n.secondHeat()
+	n.secondMethods()
 	n.secondFilms(s)
+}
+
+// secondOutside names the films of the second method that are outside the
+// range of their source.
+func (n *note) secondOutside() {
+	var parts []string
+	for _, l := range n.o.Loads {
+		if l.Second == nil {
+			continue
+		}
+		var places []string
+		for _, f := range l.Second.Films {
+			if !f.InRange {
+				places = append(places, placeOf(f))
+			}
+		}
+		if len(places) > 0 {
+			parts = append(parts, fmt.Sprintf("load case “%s”: %s", l.Name, strings.Join(places, ", ")))
+		}
+	}
+	if len(parts) > 0 {
+		n.textf("The second method is outside the range of its source in %s. Where that is so, the difference is no measure of the uncertainty.", strings.Join(parts, "; "))
+	}
+}
+
+// secondChanges lists the checks whose verdict the second method changes.
+func (n *note) secondChanges() {
+	var rows []pdf.Row
+	judged := false
+	for _, l := range n.o.Loads {
+		judged = judged || l.Second != nil && len(l.Second.Verdicts) > 0
+		for _, v := range l.Second.Changed() {
+			rows = append(rows, cells(l.Name, v.At, minus(v.Limit), n.bare(unit.Temperature, v.LimitK, 1), n.barePM(v.ValueK, v.U), string(v.First), string(v.Second)))
+		}
+	}
+	switch {
+	case len(rows) > 0:
+		n.text("Verdicts that the second method changes; its value is judged with the U of this note:")
+		n.table([]pdf.Column{{Head: "Load case", Width: 28}, {Head: "At", Width: 18}, {Head: "Limit", Width: 30}, {Head: "Limit / " + n.tempUnit(), Width: 16, Align: pdf.AlignRight},
+			{Head: "Second ± U / " + n.tempUnit(), Width: 30, Align: pdf.AlignRight}, {Head: "This note", Width: 25}, {Head: "Second", Width: 25}}, rows)
+	case judged:
+		n.text(changesNothing)
+	}
+}
+
+const changesNothing = "The second method changes no verdict."
+
+// secondHeat compares the heat shed. A heat that is given is the same for both.
+func (n *note) secondHeat() {
+	var rows []pdf.Row
+	most := n.largestHeat()
+	for _, l := range n.o.Loads {
+		if s := l.Second; l.Case.Contents.Set && s != nil && s.Status == checks.Converged {
+			rows = append(rows, cells(l.Name, n.bareWatts(l.HeatW, most), n.bareWatts(s.HeatW, most), n.bareWatts(s.HeatW-l.HeatW, most)))
+		}
+	}
+	if len(rows) == 0 {
+		n.text("The heat to shed is given, so both methods shed the same.")
+		return
+	}
+	n.tableIn(n.left(), measure, []pdf.Column{{Head: "Heat shed", Width: 58}, {Head: "This note / W", Width: 28, Align: pdf.AlignDecimal},
+		{Head: "Second / W", Width: 28, Align: pdf.AlignDecimal}, {Head: "Difference / W", Width: 30, Align: pdf.AlignDecimal}}, rows)
 }
 
 func (n *note) secondRows(s *checks.SecondMethod) {
@@ -58,8 +120,9 @@ func (n *note) otherSecond() {
 	}
 }
 
-// secondMethods prints the correlations that section 4 does not have.
-func (n *note) secondMethods(s *checks.SecondMethod) {
+// secondMethods prints the correlations of all load cases that section 4 does
+// not have.
+func (n *note) secondMethods() {
 	n.part("Its correlations", 34)
 	shown := map[*freeconv.Correlation]bool{}
 	for _, l := range n.o.Loads {
@@ -67,7 +130,7 @@ func (n *note) secondMethods(s *checks.SecondMethod) {
 			shown[u.method] = true
 		}
 	}
-	for _, u := range used(s.Films) {
+	for _, u := range used(n.secondFilmsOfAll()) {
 		if shown[u.method] {
 			n.text(u.method.Name + ": see the section on methods.")
 			continue
@@ -78,10 +141,21 @@ func (n *note) secondMethods(s *checks.SecondMethod) {
 	}
 }
 
+// secondFilmsOfAll are the films of the second method in all load cases.
+func (n *note) secondFilmsOfAll() []checks.FilmRow {
+	var films []checks.FilmRow
+	for _, l := range n.o.Loads {
+		if l.Second != nil {
+			films = append(films, l.Second.Films...)
+		}
+	}
+	return films
+}
+
 // secondFacts is the record of a correlation in a few words.
 func secondFacts(u *usage) string {
 	m := u.method
-	s := fmt.Sprintf("Length: %s. Range: %s. Form %s.", m.Length, rangeOf(m), m.Verification)
+	s := fmt.Sprintf("Length: %s. Range: %s. Form %s.", lengthRule(m), rangeOf(m), m.Verification)
 	if len(u.places) > 0 {
 		s += " Used on " + strings.Join(u.places, ", ") + "."
 	}

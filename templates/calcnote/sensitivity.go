@@ -53,7 +53,7 @@ func (n *note) effects(at string) {
 	}
 	n.part(capital(at), 26)
 	scale := n.scaleOf(ranked[0])
-	barWidth := 34.0
+	const barWidth = 31.0 // mm
 	var rows []pdf.Row
 	for i, e := range ranked {
 		if i == effectRows || i > 0 && n.negligible(e) {
@@ -69,7 +69,7 @@ func (n *note) effects(at string) {
 	}
 	n.table([]pdf.Column{{Head: "", Width: 6, Align: pdf.AlignRight}, {Head: "Input shifted", Width: 70}, {Head: "Shift", Width: 24},
 		{Head: "Up / " + n.diffUnit(), Width: 17, Align: pdf.AlignDecimal}, {Head: "Down / " + n.diffUnit(), Width: 19, Align: pdf.AlignDecimal},
-		{Head: fmt.Sprintf("−%[1]g … 0 … +%[1]g", scale), Width: barWidth + 2, Align: pdf.AlignCentre}}, rows)
+		{HeadRuns: []pdf.Run{{Inline: barScale{barWidth, exact(scale)}}}, Width: 36, Align: pdf.AlignCentre}}, rows)
 	for _, t := range n.load().Temps {
 		if t.At == at {
 			n.runs(pdf.Run{Text: "Together: "}, inline(`U_{+}`), pdf.Run{Text: " = " + n.uncertainty(t.PlusK) + ", "}, inline(`U_{-}`),

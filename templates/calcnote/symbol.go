@@ -62,7 +62,7 @@ func (b bar) Extent(_ *pdf.Doc, size float64) (w, up, down float64) {
 // Draw draws the bars with the baseline at y.
 func (b bar) Draw(d *pdf.Doc, x, y, size float64) {
 	em := pdf.Style{Size: size}.Em()
-	mid, half := x+b.width/2, b.width/2-0.2
+	mid, half := x+b.width/2, b.width/2
 	white := pdf.Color{R: 255, G: 255, B: 255}
 	draw := func(share float64, top float64, fill *pdf.Color) {
 		if share != 0 {
@@ -72,4 +72,24 @@ func (b bar) Draw(d *pdf.Doc, x, y, size float64) {
 	draw(b.up, 0.80*em, &accent)
 	draw(b.down, 0.30*em, &white)
 	d.Line(mid, y-0.95*em, mid, y+0.3*em, 0.15, pdf.Black)
+}
+
+// barScale stands over a column of bars: its numbers are at the ends of the
+// longest bars.
+type barScale struct {
+	width float64
+	end   string
+}
+
+// Extent is the size of the scale in mm.
+func (b barScale) Extent(_ *pdf.Doc, size float64) (w, up, down float64) {
+	return bar{width: b.width}.Extent(nil, size)
+}
+
+// Draw draws the scale with its baseline at y.
+func (b barScale) Draw(d *pdf.Doc, x, y, size float64) {
+	st := pdf.Style{Face: pdf.Bold, Size: size}
+	d.Text(x, y, "−"+b.end, st)
+	d.Text(x+b.width/2-d.TextWidth("0", st)/2, y, "0", st)
+	d.TextRight(x+b.width, y, "+"+b.end, st)
 }

@@ -9,6 +9,7 @@ import (
 	"stillair/checks/casefile"
 	"stillair/checks/limit"
 	"stillair/checks/unit"
+	"stillair/templates/drawing"
 	"stillair/templates/pdf"
 	"stillair/templates/plot"
 )
@@ -138,6 +139,9 @@ func (n *note) conclusion() {
 	}
 	switch {
 	case n.burnJudged():
+		if n.uncertainThreshold() {
+			n.text(lowConfidence)
+		}
 		n.text("A verdict on a burn threshold is a comparison with a quoted number, not a statement about persons. Local codes and the practice of licensed engineers come first; see the cautions.")
 	case len(n.o.Cautions) > 0:
 		n.text(noBurnThreshold + " Local codes and the practice of licensed engineers come first; see the cautions.")
@@ -237,20 +241,48 @@ func (n *note) heatAnswer() []string {
 	if len(parts) == 0 {
 		return nil
 	}
-	return []string{"Heat that the body sheds, net of sun: " + strings.Join(parts, "; ") + "."}
+	net := ""
+	if n.loadsWith(hasSun) != "" {
+		net = ", net of sun"
+	}
+	return []string{"Heat that the body sheds" + net + ": " + strings.Join(parts, "; ") + "."}
 }
 
 // heat is the heat shed with its uncertainty, and per length of a pipe.
 func (n *note) heat(l checks.LoadOutcome) string {
-	const least = 0.05 // W, below which nothing is printed
-	s := n.watts(l.HeatW)
-	if u := max(l.HeatPlusW, l.HeatMinusW); u >= least {
-		s = minus(n.sys.ShowPM(unit.Power, l.HeatW, u))
+	const least = 1e-5 // of the heat, below which an uncertainty is not printed
+	most := shedScale(l, throughput(l))
+	s := n.watts(l.HeatW, most)
+	if u := max(l.HeatPlusW, l.HeatMinusW); u > least*most {
+		s = n.heatPM(l.HeatW, u, most)
 	}
 	if l.HeatPerM != 0 {
-		s += " (" + n.show(unit.HeatPerLength, l.HeatPerM, 1) + ")"
+		s += " (" + minus(drawing.HeatText(n.sys, unit.HeatPerLength, l.HeatPerM, l.HeatPerM)) + ")"
 	}
 	return s
+}
+
+// shedScale is the heat that sets the decimals of the heat shed, beside others
+// of which the largest is given: its own where it would print as zero, unless
+// it is no more than what the balance leaves over.
+func shedScale(l checks.LoadOutcome, largest float64) float64 {
+	const (
+		shown = 1e-4 // of the largest
+		noise = 1e-8
+	)
+	if w := math.Abs(l.HeatW); w < shown*largest && w > noise*throughput(l) {
+		return w
+	}
+	return largest
+}
+
+// heatPM is a heat with its uncertainty; very small and very large ones with
+// powers of ten.
+func (n *note) heatPM(w, u, most float64) string {
+	if s := n.watts(w, most); strings.Contains(s, "·10") {
+		return s + unit.NoBreak + "±" + unit.NoBreak + n.watts(u, most)
+	}
+	return minus(n.sys.ShowPM(unit.Power, w, u))
 }
 
 // changedAnswers tell where the second method changes a verdict, one sentence
@@ -263,7 +295,7 @@ func (n *note) changedAnswers() []string {
 		list = append(list, changesOf(l)...)
 	}
 	if len(list) == 0 && judged {
-		return []string{"The second method changes no verdict."}
+		return []string{changesNothing}
 	}
 	return list
 }

@@ -31,7 +31,7 @@ func (n *note) worked() {
 		n.text("Not computed: the governing load case has no valid result.")
 		return
 	}
-	n.textf("Load case “%s”, one surface for each kind of film, the one that carries the most heat. Temperatures are those of the converged solution. "+
+	n.textf("Load case “%s”, one surface for each kind of film, the one with the most convective heat. Temperatures are those of the converged solution. "+
 		"The program carries all digits and rounds once, for print; a line redone from its printed numbers agrees with its printed result within 0.1 %%. Units are SI.", l.Name)
 	shown := map[int]bool{}
 	for _, i := range representative(l.Films) {
@@ -43,7 +43,8 @@ func (n *note) worked() {
 	n.otherFilms(shown)
 }
 
-// representative picks, for every side and method, the film with the most heat.
+// representative picks, for every side, situation and method, the film with the
+// most convective heat.
 func representative(films []checks.FilmRow) []int {
 	type group struct{ side, kind, method string }
 	best := map[group]int{}
@@ -212,8 +213,27 @@ func convectionLine(f checks.FilmRow) string {
 		diff, digits(v.H, 5), digits(f.AreaM2, 5), signed(dt), digits(f.W, 5))
 }
 
-// exact writes a typed number without padding.
-func exact(x float64) string { return strconv.FormatFloat(x, 'g', 6, 64) }
+// exact writes a typed number of at most six significant digits without
+// padding: 0.9, 1.5·10⁶.
+func exact(x float64) string {
+	s, exponent, found := strings.Cut(strconv.FormatFloat(x, 'g', 6, 64), "e")
+	exp, err := strconv.Atoi(exponent)
+	if !found || err != nil {
+		return minus(s)
+	}
+	if !strings.Contains(s, ".") {
+		s += ".0"
+	}
+	return minus(s) + "·10" + superscript(strconv.Itoa(exp))
+}
+
+// exactTeX is exact for formulas.
+func exactTeX(x float64) string {
+	if s := strconv.FormatFloat(x, 'g', 6, 64); !strings.Contains(s, "e") {
+		return s
+	}
+	return digits(x, 6)
+}
 
 // signed puts a negative number in brackets, so that it can follow an operator.
 func signed(x float64) string {
@@ -231,7 +251,7 @@ func (n *note) outsideLines(f checks.FilmRow) []string {
 	}
 	return append(lines,
 		fmt.Sprintf(`Q_\mathrm{s} = \alpha_\mathrm{s}\,G\,A = %s \times %s \times %s = %s\ \mathrm{W}`,
-			exact(f.Absorptance), exact(f.SunWm2), digits(f.AreaM2, 5), digits(f.SunW, 5)),
+			exactTeX(f.Absorptance), exactTeX(f.SunWm2), digits(f.AreaM2, 5), digits(f.SunW, 5)),
 		sumLine([]string{`Q_\mathrm{c}`, `Q_\mathrm{r}`, `Q_\mathrm{s}`}, f.W, f.RadiationW, -f.SunW))
 }
 
@@ -252,7 +272,7 @@ func sumLine(symbols []string, terms ...float64) string {
 	}
 	decimals := 4
 	if largest > 0 {
-		decimals = min(9, max(1, 5-int(math.Floor(math.Log10(largest)))))
+		decimals = min(15, max(1, 5-int(math.Floor(math.Log10(largest)))))
 	}
 	left, right := symbols[0], fmt.Sprintf("%.*f", decimals, terms[0])
 	for i, t := range terms[1:] {
@@ -307,7 +327,7 @@ func (n *note) wholeBody() {
 	n.part("All faces together", 13)
 	n.display(wholeLine(l), "")
 	if l.Case.Heat.Set {
-		n.textf("The heat to shed is %s\u00A0W; every heat balance of the body closes %s.", exact(l.Case.Heat.SI), within(l.ClosureW, l.HeatW))
+		n.textf("The heat to shed is %s; every heat balance of the body closes %s.", n.watts(l.Case.Heat.SI, l.Case.Heat.SI), within(l.ClosureW, l.HeatW))
 	}
 }
 
@@ -328,7 +348,7 @@ func wholeLine(l *checks.LoadOutcome) string {
 
 func radiationLine(eps, area, t1, t2, w float64, powers string) string {
 	return fmt.Sprintf(`Q_\mathrm{r} = \varepsilon\,\sigma\,A \left(%s\right) = %s \times %s \times %s \times \left(%.3f^4 - %.3f^4\right) = %s\ \mathrm{W}`,
-		powers, exact(eps), sigmaText, digits(area, 5), t1, t2, digits(w, 5))
+		powers, exactTeX(eps), sigmaText, digits(area, 5), t1, t2, digits(w, 5))
 }
 
 // otherFilms is the table of the films that were not worked out above.
@@ -338,10 +358,15 @@ func (n *note) otherFilms(shown map[int]bool) {
 		return
 	}
 	n.part("All films of this load case", 24)
+	most := 0.0
+	for _, f := range films {
+		most = math.Max(most, math.Max(math.Abs(f.W), math.Abs(f.RadiationW)))
+	}
+	most = math.Max(most/100, math.Min(most, 0.001)) // one digit more than in the results
 	var rows []pdf.Row
 	for _, f := range films {
 		rows = append(rows, cells(placeOf(f), string(f.Film.Kind), plainDigits(f.LengthM, 4), fmt.Sprintf("%.2f", f.FilmK), plainDigits(f.Ra, 4)+outOfRange(f), plainDigits(f.Nu, 4),
-			fmt.Sprintf("%.3f", f.H), plainDigits(f.AreaM2, 4), n.bare(unit.Power, f.W, 2), n.bare(unit.Power, f.RadiationW, 2)))
+			fmt.Sprintf("%.3f", f.H), plainDigits(f.AreaM2, 4), n.bareWatts(f.W, most), n.bareWatts(f.RadiationW, most)))
 	}
 	n.table([]pdf.Column{
 		{Head: "Film", Width: 29}, {Head: "Situation", Width: 49}, {Head: "L / m", Width: 18, Align: pdf.AlignDecimal}, {Head: "T / K", Width: 16, Align: pdf.AlignDecimal},

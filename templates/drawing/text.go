@@ -34,6 +34,7 @@ var advance = [95]uint16{
 var advanceMore = map[rune]uint16{
 	'\u00A0': 651, '\u2009': 409, '\u202F': 409, '°': 1024, '·': 651, '²': 821, '³': 821,
 	'±': 1716, '×': 1716, 'Ø': 1612, '–': 1024, 'Δ': 1401, 'ä': 1255, 'ö': 1253, 'ü': 1298,
+	'⁻': 1081, '⁰': 821, '¹': 821, '⁴': 821, '⁵': 821, '⁶': 821, '⁷': 821, '⁸': 821, '⁹': 821, '−': 1716,
 	'é': 1260, 'è': 1260, 'ß': 1290, 'Ä': 1401, 'Ö': 1612, 'Ü': 1499,
 }
 
@@ -115,19 +116,48 @@ func temperatureText(sys unit.System, k float64) string {
 	return sys.Show(unit.Temperature, k, 0)
 }
 
-// powerText is a heat flow beside others of which the largest is given: at
-// least three significant digits of that, the same decimals for all.
+// powerText is a heat flow beside others of which the largest is given.
 func powerText(sys unit.System, w, largest float64) string {
-	decimals := 0
-	switch a := math.Abs(sys.Value(unit.Power, largest)); {
-	case a < 1:
-		decimals = 3
-	case a < 10:
-		decimals = 2
-	case a < 1000:
-		decimals = 1
+	return HeatText(sys, unit.Power, w, largest)
+}
+
+// Below leastPlain, and from mostPlain on, heats are written with a power of
+// ten.
+const (
+	leastPlain = 1e-3
+	mostPlain  = 1e9
+)
+
+// HeatText is a heat, or a heat per length, beside others of which the largest
+// is given: at least three significant digits of that, the same decimals for
+// all; where the largest is very small or very large a power of ten, such as
+// 1.00·10⁻⁶ W.
+func HeatText(sys unit.System, k unit.Kind, si, largest float64) string {
+	a := math.Abs(sys.Value(k, largest))
+	switch {
+	case a > 0 && a < leastPlain, a >= mostPlain:
+		return scientific(sys.Value(k, si)) + unit.NoBreak + sys.Unit(k)
+	case a == 0, a >= 100 && a < 1000:
+		return sys.Show(k, si, 1)
+	case a >= 1000:
+		return sys.Show(k, si, 0)
 	}
-	return sys.Show(unit.Power, w, decimals)
+	return sys.Show(k, si, 2-int(math.Floor(math.Log10(a))))
+}
+
+var raised = strings.NewReplacer("-", "⁻", "0", "⁰", "1", "¹", "2", "²", "3", "³", "4", "⁴", "5", "⁵", "6", "⁶", "7", "⁷", "8", "⁸", "9", "⁹")
+
+// scientific is a number of three significant digits with a power of ten.
+func scientific(v float64) string {
+	mantissa, e, _ := strings.Cut(strconv.FormatFloat(v, 'e', 2, 64), "e")
+	exponent, err := strconv.Atoi(e)
+	switch {
+	case v == 0:
+		return "0"
+	case err != nil: // no finite number
+		return unit.NotComputed
+	}
+	return mantissa + "·10" + raised.Replace(strconv.Itoa(exponent))
 }
 
 // shareText is a share of a whole, 0..1, in percent to one decimal.

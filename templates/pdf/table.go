@@ -18,11 +18,12 @@ const (
 )
 
 // Column is the head and the shape of a column. Width is a share of the
-// table's width.
+// table's width. HeadRuns, where given, stand in place of Head.
 type Column struct {
-	Head  string
-	Width float64
-	Align Align
+	Head     string
+	HeadRuns []Run
+	Width    float64
+	Align    Align
 }
 
 // Cell is what one row holds in one column.
@@ -142,13 +143,20 @@ func (g *grid) columns() {
 	bold := g.t.Style.With(Bold)
 	for i, c := range g.t.Columns {
 		var ls []line
-		if c.Head != "" {
-			ls = g.d.setRuns(inFace(T(c.Head), Bold), bold, g.w[i])
+		if runs := c.headRuns(); runs != nil {
+			ls = g.d.setRuns(inFace(runs, Bold), bold, g.w[i])
 			g.headH = max(g.headH, height(ls, bold)+2*cellPad)
 		}
 		g.heads = append(g.heads, ls)
 		g.point = append(g.point, g.pointOf(i, c))
 	}
+}
+
+func (c Column) headRuns() []Run {
+	if c.HeadRuns == nil && c.Head != "" {
+		return T(c.Head)
+	}
+	return c.HeadRuns
 }
 
 // gap is the room before a column; numbers need more before words.

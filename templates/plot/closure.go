@@ -24,6 +24,7 @@ const promised = 1e-9
 const (
 	leastWidth  = 60.0
 	leastHeight = 35.0
+	axesRoom    = 15.0 // above and below the field, with the numbers and the name of the axis
 )
 
 // Closure shows how the heat left over at the worst place, in W, shrinks from
@@ -43,7 +44,7 @@ func Closure(o *checks.Outcome, load int, wMM, hMM float64) (drawing.Scene, bool
 			v.points = append(v.points, plotter.XY{X: float64(it.N), Y: it.ClosureW})
 		}
 	}
-	if len(v.points) == 0 || !v.decades() {
+	if len(v.points) == 0 || !v.decades(hMM-axesRoom) {
 		return drawing.Scene{}, false
 	}
 	r := NewRecorder(wMM, hMM)
@@ -80,8 +81,9 @@ type course struct {
 }
 
 // decades finds the ends of the axis: full powers of ten around all that is
-// above nothing, with a free one at the foot.
-func (v *course) decades() bool {
+// above nothing, with a free one at the foot and room for the name of the
+// promise in a field of a height in mm.
+func (v *course) decades(field float64) bool {
 	v.lo, v.hi = math.Inf(1), math.Inf(-1)
 	for _, y := range append(v.heats(), v.promise) {
 		if e := math.Log10(y); finite(e) {
@@ -90,7 +92,15 @@ func (v *course) decades() bool {
 	}
 	v.lo, v.hi = math.Floor(v.lo)-1, math.Ceil(v.hi)
 	v.hi = math.Max(v.hi, v.lo+3)
-	return finite(v.lo, v.hi)
+	if !finite(v.lo, v.hi) {
+		return false
+	}
+	if p := math.Log10(v.promise); finite(p) {
+		for (p-v.lo)*field < nameRoom*(v.hi-v.lo) && nameRoom < field {
+			v.lo--
+		}
+	}
+	return true
 }
 
 func (v *course) heats() []float64 {
@@ -128,7 +138,7 @@ func (v *course) draw(c draw.Canvas, hMM float64) bool {
 	p.X.Min, p.X.Max = all[0].X-0.5, all[len(all)-1].X+0.5
 	p.Y.Min, p.Y.Max = v.lo, v.hi
 	p.X.Tick.Marker = evenTicks(p.X.Min, p.X.Max, 12, 1)
-	p.Y.Tick.Marker = decadeTicks(int(v.lo), int(v.hi), int((hMM-15)/6))
+	p.Y.Tick.Marker = decadeTicks(int(v.lo), int(v.hi), int((hMM-axesRoom)/6))
 	p.Draw(draw.Crop(c, mm(edge), -mm(edge), mm(edge), -mm(edge)))
 	return true
 }
@@ -163,23 +173,41 @@ func (v *course) Plot(c draw.Canvas, p *plot.Plot) {
 	}
 }
 
-// name writes what the promise is beside its line, clear of the curve; with
-// its value when there is room.
+// promiseName is what stands at the line of the promise, in two lines.
+var promiseName = []string{"closed below " + power(-9), "of the largest heat"}
+
+// Measures of the name of the promise in mm.
+const (
+	nameOff   = 1.1            // from the line to the words
+	namePitch = 1.6 * textSize // from line to line of words
+	nameRoom  = nameOff + 2*namePitch
+)
+
+// name writes what the promise is beside its line, clear of the curve: below
+// the line at the left where that is free.
 func (v *course) name(c draw.Canvas, y vg.Length, curve []vg.Point) {
-	short := "promise: " + power(-9) + " of the heat"
-	off := mm(1.1 + textSize/2)
-	for _, s := range []string{short + ", " + watts(v.promise), short} {
-		w := mm(width(s))
-		for _, x := range []vg.Length{c.Min.X + mm(1.5), c.Max.X - mm(1.5) - w} {
-			for _, mid := range []vg.Length{y - off, y + off} {
-				if within(c, x, w, mid) && clearOf(curve, x, w, mid) {
-					v.patched(c, x, mid, s)
-					return
-				}
+	box := v.nameBox(c, y, curve)
+	for i, s := range promiseName {
+		mid := box.Max.Y - mm(namePitch)*(vg.Length(i)+0.5)
+		v.patched(c, box.Min.X, mid, s)
+	}
+}
+
+// nameBox finds a free place for the name.
+func (v *course) nameBox(c draw.Canvas, y vg.Length, curve []vg.Point) vg.Rectangle {
+	w, h := mm(math.Max(width(promiseName[0]), width(promiseName[1]))), mm(2*namePitch)
+	at := func(x, top vg.Length) vg.Rectangle {
+		return vg.Rectangle{Min: vg.Point{X: x, Y: top - h}, Max: vg.Point{X: x + w, Y: top}}
+	}
+	below, above := y-mm(nameOff), y+mm(nameOff)+h
+	for _, top := range []vg.Length{below, above} {
+		for x := c.Min.X + mm(1.5); x+w <= c.Max.X-mm(1); x += mm(1) {
+			if box := at(x, top); box.Min.Y >= c.Min.Y && box.Max.Y <= c.Max.Y && clearOf(curve, box) {
+				return box
 			}
 		}
 	}
-	v.patched(c, c.Min.X+mm(1.5), y-off, short)
+	return at(c.Min.X+mm(1.5), below)
 }
 
 // patched writes on a white ground, so that the grid strikes nothing out.
@@ -189,15 +217,10 @@ func (v *course) patched(c draw.Canvas, x, mid vg.Length, s string) {
 	v.left(c, x, mid, s)
 }
 
-// within tells whether a line of text stays in the field of the chart.
-func within(c draw.Canvas, x, w, mid vg.Length) bool {
-	return x >= c.Min.X && x+w <= c.Max.X && mid >= c.Min.Y+mm(textSize) && mid <= c.Max.Y-mm(textSize/2)
-}
-
-// clearOf tells whether a curve and its marks keep off a line of text.
-func clearOf(curve []vg.Point, x, w, mid vg.Length) bool {
+// clearOf tells whether a curve and its marks keep off a rectangle.
+func clearOf(curve []vg.Point, r vg.Rectangle) bool {
 	box := draw.Canvas{Rectangle: vg.Rectangle{
-		Min: vg.Point{X: x - mm(1), Y: mid - mm(textSize)}, Max: vg.Point{X: x + w + mm(1), Y: mid + mm(textSize)}}}
+		Min: vg.Point{X: r.Min.X - mm(1), Y: r.Min.Y - mm(1)}, Max: vg.Point{X: r.Max.X + mm(1), Y: r.Max.Y + mm(1)}}}
 	for _, p := range curve {
 		if box.Contains(p) {
 			return false
@@ -236,7 +259,7 @@ func (v *course) title(l checks.LoadOutcome) string {
 	text := fmt.Sprintf("Heat left over by iteration, load case %s: %s after iteration %g, %s after iteration %g",
 		plain(l.Name), watts(first.Y), first.X, watts(last.Y), last.X)
 	if v.promise > 0 {
-		text += "; the promise is " + watts(v.promise)
+		text += "; closed below " + watts(v.promise)
 	}
 	return text + "."
 }

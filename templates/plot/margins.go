@@ -65,54 +65,50 @@ func (s selection) slots() int {
 }
 
 // candidates are all checks in the order in which they deserve a line: those
-// that govern their limit, the worst of every limit in every load case, and
-// the others, which get none.
+// that govern their limit, those that are not a pass, the worst of every limit
+// in every load case, and the others, which get none.
 func candidates(o *checks.Outcome) (ranked, others []check) {
-	var governing, worst []check
+	var governing, grave, passes []check
 	for _, l := range o.Loads {
-		of := map[string]int{} // place in worst by limit
 		for _, v := range l.Verdicts {
 			c := check{Judged: v, load: plain(l.Name)}
-			key := v.Limit + "|" + v.Source
-			at, seen := of[key]
 			switch {
 			case !c.drawable():
 				others = append(others, c)
 			case v.Governing:
 				governing = append(governing, c)
-			case !seen:
-				of[key] = len(worst)
-				worst = append(worst, c)
-			case graver(c, worst[at]) < 0:
-				others = append(others, worst[at])
-				worst[at] = c
+			case v.Verdict != checks.Pass:
+				grave = append(grave, c)
 			default:
-				others = append(others, c)
+				passes = append(passes, c)
 			}
 		}
 	}
-	worst, others = dropGoverned(governing, worst, others)
-	slices.SortStableFunc(governing, graver)
-	slices.SortStableFunc(worst, graver)
-	return append(governing, worst...), others
+	for _, list := range [][]check{governing, grave, passes} {
+		slices.SortStableFunc(list, graver)
+	}
+	ranked = append(governing, grave...)
+	worst, rest := worstOfEach(passes, ranked)
+	return append(ranked, worst...), append(others, rest...)
 }
 
-// dropGoverned moves those of the worst to the others whose limit and load
-// case has a governing check already.
-func dropGoverned(governing, worst, others []check) (kept, rest []check) {
+// worstOfEach keeps the first of sorted checks for every limit and load case
+// that is not among those taken already.
+func worstOfEach(list, already []check) (worst, rest []check) {
 	taken := map[string]bool{}
 	key := func(c check) string { return c.load + "|" + c.Limit + "|" + c.Source }
-	for _, c := range governing {
+	for _, c := range already {
 		taken[key(c)] = true
 	}
-	for _, c := range worst {
+	for _, c := range list {
 		if taken[key(c)] {
-			others = append(others, c)
-		} else {
-			kept = append(kept, c)
+			rest = append(rest, c)
+			continue
 		}
+		taken[key(c)] = true
+		worst = append(worst, c)
 	}
-	return kept, others
+	return worst, rest
 }
 
 // choose picks the checks for a chart of a number of lines.

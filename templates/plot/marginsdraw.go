@@ -44,8 +44,8 @@ func MarginsHeight(o *checks.Outcome) float64 {
 
 // Margins shows the checks at a glance: under each limit the calculated
 // temperatures with their uncertainty against it, with the verdict. It shows
-// the checks that govern a limit first of all, then the worst of every load
-// case, at most 14, and sums up the others. The second result is false when
+// the checks that govern a limit first of all, then all that are not a pass, then
+// the worst of every limit and load case, at most 14, and sums up the others. The second result is false when
 // nothing was judged or the frame, in mm, is too small to tell anything.
 func Margins(o *checks.Outcome, wMM, hMM float64) (drawing.Scene, bool) {
 	w, err := words()
