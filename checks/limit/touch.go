@@ -251,11 +251,11 @@ func (t *Threshold) standards() string {
 			names = append(names, e.Standard)
 		}
 	}
-	how := ", burn threshold as quoted"
+	how := "burn threshold as quoted from "
 	if t.derived {
-		how = ", burn threshold derived from quoted values"
+		how = "burn threshold derived from values of "
 	}
-	return strings.Join(names, "; ") + how
+	return how + strings.Join(names, "; ")
 }
 
 func (t *Threshold) step(format string, values ...any) {
