@@ -58,9 +58,9 @@ type Verification string
 
 // How a published form or number was obtained.
 const (
-	InPrint       Verification = "seen in print"
-	Transcription Verification = "seen in an open transcription"
-	FromMemory    Verification = "from memory, not seen in print"
+	InPrint    Verification = "seen in print"
+	Retyped    Verification = "seen in an open re-typed copy"
+	FromMemory Verification = "from memory, not seen in print"
 )
 
 // Input is what the function of a correlation may depend on.

@@ -277,7 +277,7 @@ func TestNotReproducible(t *testing.T) {
 }
 
 // J. P. Holman, Heat Transfer, 10th ed. (SI units), Example 7-1 (seen in an
-// open transcription): a 3.5 m plate takes in 800 W/m²; the wall temperature
+// open re-typed copy): a 3.5 m plate takes in 800 W/m²; the wall temperature
 // comes out as 185 °C after two passes over the property tables.
 func TestHolmanUniformFlux(t *testing.T) {
 	const q, L, Tinf, g = 800, 3.5, 30.0, 9.8
@@ -322,10 +322,10 @@ func TestBooksWithOurAir(t *testing.T) {
 		{"Cengel & Ghajar 5th ed. 2015, Example 9-2(c)", // in print
 			geometry.Face{Facing: 180, Height: 0.6, Width: 0.6, Area: 0.36, Perimeter: 2.4}, 90, 30,
 			Choice{PlateDown: "mcadams-1954-down"}, 2.971, 0.02},
-		{"Geankoplis 3rd ed., Example 4.7-1: 127.5 W from 0.305 m square", // transcription
+		{"Geankoplis 3rd ed., Example 4.7-1: 127.5 W from 0.305 m square", // re-typed copy
 			geometry.Face{Facing: 90, Height: 0.305, Width: 0.305, Area: 0.093025, Perimeter: 1.22}, 232.25, 37.85,
 			Choice{VerticalPlate: "mcadams-1954-plate"}, 127.5 / (0.093025 * 194.4), 0.02},
-		{"Sukhatme 4th ed., Example 6.1, Churchill & Chu laminar: Nu = 71.89, k = 0.0297", // transcription
+		{"Sukhatme 4th ed., Example 6.1, Churchill & Chu laminar: Nu = 71.89, k = 0.0297", // re-typed copy
 			geometry.Face{Facing: 90, Height: 0.5, Width: 1, Area: 0.5, Perimeter: 3}, 100, 40,
 			Choice{VerticalPlate: "churchill-chu-1975-plate-laminar"}, 71.89 * 0.0297 / 0.5, 0.02},
 	} {

@@ -56,7 +56,7 @@ func TestFacingAndTilt(t *testing.T) {
 
 // A/P of a 0.6 m square plate is 0.15 m: Cengel & Ghajar, Heat and Mass
 // Transfer, 5th ed. 2015, Example 9-2(b). A disc has D/4: Gavhane, Heat
-// Transfer, Example 3.34 (open transcription).
+// Transfer, Example 3.34 (open re-typed copy).
 func TestAreaOverPerimeter(t *testing.T) {
 	near(t, "square", Plate(0.6, 0.6, 90, Stack{})[0].Face.AreaOverPerimeter(), 0.15, 1e-12)
 	near(t, "disc", disc("d", 0.16, 0).AreaOverPerimeter(), 0.04, 1e-12)
@@ -95,7 +95,7 @@ func TestDishArea(t *testing.T) {
 }
 
 // Two-layer lagged pipe: r 44, 94, 124 mm; k 0.087 and 0.064 W/(m·K); 623 K to
-// 313 K; 149.2 W/m. Gavhane, Heat Transfer, Example 2.3 (open transcription of
+// 313 K; 149.2 W/m. Gavhane, Heat Transfer, Example 2.3 (open re-typed copy of
 // the book's worked example).
 func TestTwoLayerPipePublished(t *testing.T) {
 	layers := Cylinder(0.088, 1, true, false, Stack{Layers: []float64{0.050, 0.030}})[0].Slabs
@@ -105,7 +105,7 @@ func TestTwoLayerPipePublished(t *testing.T) {
 
 // Steam pipe with 30 mm of insulation between given films: inner film 60, outer
 // film 18 W/(m²·K), wall k 80, insulation k 0.05 W/(m·K), 320 °C to 5 °C:
-// 120.8 W/m. Cengel, Example 3-8 (open transcription of the worked example).
+// 120.8 W/m. Cengel, Example 3-8 (open re-typed copy of the worked example).
 func TestInsulatedSteamPipePublished(t *testing.T) {
 	p := Cylinder(0.055, 1, true, false, Stack{Wall: 0.0025, Layers: []float64{0.03}})[0]
 	r := 1/(60*math.Pi*0.05) + 1/(80*p.Slabs[0].Factor()) + 1/(0.05*p.Slabs[1].Factor()) + 1/(18*p.Face.Area)

@@ -160,7 +160,7 @@ func BenchmarkSolveSixWalls(b *testing.B) {
 
 // Thermocouple bead in 20 °C air (h = 75 W/(m²·K)) between walls at 100 °C, all
 // black: 28.4 °C. Lienhard & Lienhard, A Heat Transfer Textbook, 3rd ed.,
-// Example 1.5 (open transcription of the book's worked example).
+// Example 1.5 (open re-typed copy of the book's worked example).
 func TestThermocoupleBeadPublished(t *testing.T) {
 	b := New(293)
 	air, walls, bead := b.Fixed("air", 293), b.Fixed("walls", 373), b.Unknown("bead")

@@ -9,7 +9,7 @@ import "math"
 // The reduced Helmholtz energy is alpha = alpha0(delta, tau) + alphaR(delta, tau)
 // with tau = Tj/T and delta = rho/rhoj. Of the 19 terms of alphaR only the six
 // that are linear in delta are kept: alphaR = a(tau) delta, the second virial
-// coefficient. Coefficients read from an open transcription of the paper's
+// coefficient. Coefficients read from an open re-typed copy of the paper's
 // tables, not from the paper.
 
 const (
