@@ -166,3 +166,15 @@ loads:
 		t.Errorf("loss case %q, whole %q", o.Loads[1].Verdict, o.Verdict)
 	}
 }
+
+// A limit of the inside air that only the mean meets is pointed out, unless the
+// upper zone has its own limit.
+func TestUpperZoneAboveTheLimitOfTheMeanIsSaid(t *testing.T) {
+	box := "title: b\nsurroundings: {air: 20 °C}\nbody:\n  box: {width: 500 mm, height: 500 mm, depth: 200 mm, emissivity: 0.8}\ncontents: 40 °C\nlimits:\n  - {at: inside air, most: 42 °C, why: test}\n"
+	for extra, want := range map[string]bool{"": true, "  - {at: upper zone, most: 60 °C, why: test}\n": false} {
+		notes := strings.Join(run(t, box+extra).Loads[0].Notes, "\n")
+		if got := strings.Contains(notes, "not by the upper zone"); got != want {
+			t.Errorf("own limit %q: notes %q", extra, notes)
+		}
+	}
+}

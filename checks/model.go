@@ -56,16 +56,15 @@ func (s solid) mean(t1, t2 float64) float64 {
 
 // face is one free face of the model with its nodes and links.
 type face struct {
-	part     geometry.Part
-	solids   []solid
-	inner    balance.Node // inside surface; the core when there is no inside film
-	between  []balance.Node
-	outer    balance.Node
-	seen     balance.Node // where its radiation goes
-	seenName string
-	sun      float64 // W absorbed
-	convect  int     // link numbers
-	inFilm   int     // -1 when the face has no inside film
+	part    geometry.Part
+	solids  []solid
+	inner   balance.Node // inside surface; the core when there is no inside film
+	between []balance.Node
+	outer   balance.Node
+	seen    balance.Node // where its radiation goes
+	sun     float64      // W absorbed
+	convect int          // link numbers
+	inFilm  int          // -1 when the face has no inside film
 }
 
 // model is a case turned into a heat balance.
@@ -182,7 +181,7 @@ func (m *model) addCore(solids []solid) {
 
 // addFace makes the nodes and links of one free face, from the inside out.
 func (m *model) addFace(p geometry.Part, solids []solid, around balance.Node) {
-	f := face{part: p, solids: solids, inner: m.core, inFilm: -1, seen: around, seenName: "surroundings"}
+	f := face{part: p, solids: solids, inner: m.core, inFilm: -1, seen: around}
 	name := p.Face.Name
 	at := m.core
 	if m.c.Body.Kind == "box" {
@@ -251,8 +250,7 @@ func (m *model) insideFilm(f face) int {
 func (m *model) outsideLinks(f *face) {
 	out := f.part.Face
 	if q, ok := m.c.Surroundings.Sees[out.Name]; ok {
-		f.seenName = "what " + out.Name + " sees"
-		f.seen = m.b.Fixed(f.seenName, q.SI)
+		f.seen = m.b.Fixed("what "+out.Name+" sees", q.SI)
 	}
 	g := out.Area * factor(m.t.film, filmKey{out.Name, outside})
 	f.convect = len(m.b.Links)

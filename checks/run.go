@@ -3,6 +3,7 @@ package checks
 import (
 	"fmt"
 	"math"
+	"slices"
 	"strings"
 
 	"stillair/checks/balance"
@@ -96,8 +97,11 @@ func beyond(films []FilmRow) []string {
 }
 
 // aboveTheMean tells when a limit of the inside air is met by the mean but not
-// by the upper zone.
+// by the upper zone, unless the upper zone has a limit of its own.
 func aboveTheMean(l LoadOutcome) []string {
+	if slices.ContainsFunc(l.Verdicts, func(v Judged) bool { return v.At == "upper zone" && !v.Lower }) {
+		return nil
+	}
 	var list []string
 	for _, v := range l.Verdicts {
 		for _, t := range l.Temps {

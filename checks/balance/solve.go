@@ -330,9 +330,9 @@ func norm(s *state, unknown []Node) float64 {
 
 // bracket holds the only root of one falling function between two excess
 // temperatures.
-type bracket struct{ low, high, floor float64 }
+type bracket struct{ low, high float64 }
 
-func newBracket(floor float64) *bracket { return &bracket{low: floor, high: math.Inf(1), floor: floor} }
+func newBracket(floor float64) *bracket { return &bracket{low: floor, high: math.Inf(1)} }
 
 // tighten moves an end to x: heat left over means the root is above.
 func (k *bracket) tighten(x, rest float64) {

@@ -17,6 +17,7 @@ import (
 	"stillair/checks/casefile"
 	"stillair/freeconv"
 	"stillair/templates/pdf"
+	"stillair/templates/pdf/pdftest"
 	"stillair/templates/starter"
 	"stillair/templates/typeset"
 )
@@ -50,33 +51,9 @@ func write(t *testing.T, o *checks.Outcome, opt Options) []byte {
 	return b.Bytes()
 }
 
-// tool runs an external program; the test is skipped where it is missing,
-// except under CI.
-func tool(t *testing.T, doc []byte, name string, args ...string) string {
-	t.Helper()
-	if _, err := exec.LookPath(name); err != nil {
-		if os.Getenv("CI") == "" {
-			t.Skipf("%s is not installed", name)
-		}
-		t.Fatal(err)
-	}
-	file := filepath.Join(t.TempDir(), "note.pdf")
-	if err := os.WriteFile(file, doc, 0o600); err != nil {
-		t.Fatal(err)
-	}
-	for i := range args {
-		args[i] = strings.ReplaceAll(args[i], "FILE", file)
-	}
-	out, err := exec.Command(name, args...).CombinedOutput()
-	if err != nil {
-		t.Fatalf("%s: %v\n%s", name, err, out)
-	}
-	return string(out)
-}
-
 func pages(t *testing.T, doc []byte) []string {
 	t.Helper()
-	text := tool(t, doc, "pdftotext", "-layout", "FILE", "-")
+	text := pdftest.Tool(t, doc, "pdftotext", "-layout", "FILE", "-")
 	return strings.Split(strings.TrimSuffix(text, "\f"), "\f")
 }
 
@@ -95,7 +72,7 @@ func TestEveryStarterMakesACompleteNote(t *testing.T) {
 			o := outcome(t, name)
 			issue(o) // a status mark would stand between the words of the extracted text
 			doc := write(t, o, Options{Company: "Example Engineering"})
-			if out := tool(t, doc, "qpdf", "--check", "FILE"); !strings.Contains(out, "No syntax or stream encoding errors") {
+			if out := pdftest.Tool(t, doc, "qpdf", "--check", "FILE"); !strings.Contains(out, "No syntax or stream encoding errors") {
 				t.Error(out)
 			}
 			p := pages(t, doc)
@@ -175,7 +152,7 @@ func checkUnits(t *testing.T, text string) {
 func TestBookmarksPointAtTheirPages(t *testing.T) {
 	o := outcome(t, "panel")
 	doc := write(t, o, Options{})
-	js := tool(t, doc, "qpdf", "--json", "--json-key=outlines", "FILE")
+	js := pdftest.Tool(t, doc, "qpdf", "--json", "--json-key=outlines", "FILE")
 	var outline struct {
 		Outlines []struct {
 			Title string `json:"title"`
@@ -209,7 +186,7 @@ func TestAttachmentsComeBack(t *testing.T) {
 	}
 	for i, want := range [][]byte{o.File.Text, results} {
 		out := filepath.Join(t.TempDir(), "out")
-		tool(t, doc, "pdfdetach", "-save", strconv.Itoa(i+1), "-o", out, "FILE")
+		pdftest.Tool(t, doc, "pdfdetach", "-save", strconv.Itoa(i+1), "-o", out, "FILE")
 		if got, err := os.ReadFile(out); err != nil || !bytes.Equal(got, want) {
 			t.Errorf("attachment %d came back changed (%v)", i+1, err)
 		}
@@ -241,7 +218,7 @@ func TestNothingLeavesTheTextBlock(t *testing.T) {
 		for _, paper := range []string{"A4", "Letter"} {
 			o := outcome(t, name)
 			issue(o)
-			out := tool(t, write(t, o, Options{Paper: paper}), "pdftotext", "-bbox", "FILE", "-")
+			out := pdftest.Tool(t, write(t, o, Options{Paper: paper}), "pdftotext", "-bbox", "FILE", "-")
 			sheet := pdf.A4
 			if paper == "Letter" {
 				sheet = pdf.Letter
@@ -265,7 +242,7 @@ func TestStatusMark(t *testing.T) {
 		for i := range o.Loads {
 			o.Loads[i].Case.Note.Status = status
 		}
-		out := tool(t, write(t, o, Options{}), "pdftotext", "-bbox", "FILE", "-")
+		out := pdftest.Tool(t, write(t, o, Options{}), "pdftotext", "-bbox", "FILE", "-")
 		for i, p := range strings.Split(out, "<page ")[1:] {
 			marked := false
 			for _, m := range word.FindAllStringSubmatch(p, -1) {

@@ -15,7 +15,7 @@ import (
 // solution is the record of the solver.
 func (n *note) solution() {
 	n.sectionRoom("Solution", 53)
-	n.text("Each balance is solved by successive linear solutions with the film and radiation coefficients of the step before, until temperatures and the heat balance close. The same balance is solved a second time by plain damped substitution; the largest difference between both is given.")
+	n.text("Each balance is solved by fixed-point iteration on the temperatures above the air: films and radiation with their slopes at the temperatures of the step before, one linear solution, repeated until the heat balance closes. It is solved a second time, from another start, by plain damped substitution without slopes; the largest difference between both is given.")
 	var rows []pdf.Row
 	for _, l := range n.o.Loads {
 		row := cells(l.Name, string(l.Status), fmt.Sprint(l.Iterations), closure(l.ClosureW), fmt.Sprint(l.CrossCheck.Iterations), closure(l.CrossCheck.MaxDiffK), agrees(l))

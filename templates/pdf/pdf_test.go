@@ -5,7 +5,6 @@ import (
 	"fmt"
 	"math"
 	"os"
-	"os/exec"
 	"path/filepath"
 	"regexp"
 	"strconv"
@@ -14,6 +13,7 @@ import (
 	"time"
 
 	"stillair/templates/drawing"
+	"stillair/templates/pdf/pdftest"
 )
 
 var body = Style{Size: 10}
@@ -35,30 +35,6 @@ func build(t *testing.T, s Setup, draw func(*Doc)) *Result {
 		t.Fatal(err)
 	}
 	return r
-}
-
-// tool runs an external program on the document; it is skipped where the
-// program is missing, except under CI.
-func tool(t *testing.T, doc []byte, name string, args ...string) string {
-	t.Helper()
-	if _, err := exec.LookPath(name); err != nil {
-		if os.Getenv("CI") == "" {
-			t.Skipf("%s is not installed", name)
-		}
-		t.Fatal(err)
-	}
-	file := filepath.Join(t.TempDir(), "doc.pdf")
-	if err := os.WriteFile(file, doc, 0o600); err != nil {
-		t.Fatal(err)
-	}
-	for i, a := range args {
-		args[i] = strings.ReplaceAll(a, "FILE", file)
-	}
-	out, err := exec.Command(name, args...).CombinedOutput()
-	if err != nil {
-		t.Fatalf("%s: %v\n%s", name, err, out)
-	}
-	return string(out)
 }
 
 func hundredRows(d *Doc) {
@@ -84,7 +60,7 @@ func TestSameInputSameBytes(t *testing.T) {
 
 func TestEveryPageKnowsTheCount(t *testing.T) {
 	r := build(t, setup(), hundredRows)
-	pages := strings.Split(strings.TrimSuffix(tool(t, r.Bytes, "pdftotext", "-layout", "FILE", "-"), "\f"), "\f")
+	pages := strings.Split(strings.TrimSuffix(pdftest.Tool(t, r.Bytes, "pdftotext", "-layout", "FILE", "-"), "\f"), "\f")
 	if len(pages) != r.Pages || r.Pages < 3 {
 		t.Fatalf("%d pages, the result says %d", len(pages), r.Pages)
 	}
@@ -98,7 +74,7 @@ func TestEveryPageKnowsTheCount(t *testing.T) {
 func TestTableHeadsRepeatAndRowsStayWhole(t *testing.T) {
 	r := build(t, setup(), hundredRows)
 	seen := 0
-	for _, p := range strings.Split(strings.TrimSuffix(tool(t, r.Bytes, "pdftotext", "-layout", "FILE", "-"), "\f"), "\f") {
+	for _, p := range strings.Split(strings.TrimSuffix(pdftest.Tool(t, r.Bytes, "pdftotext", "-layout", "FILE", "-"), "\f"), "\f") {
 		if !strings.Contains(p, "Head of names") {
 			t.Error("a page without the head of the table")
 		}
@@ -153,7 +129,7 @@ func TestHostileTextIsShownAndReported(t *testing.T) {
 	if strings.Contains(got, "U+0395") {
 		t.Error("Greek letters were replaced")
 	}
-	text := tool(t, r.Bytes, "pdftotext", "FILE", "-")
+	text := pdftest.Tool(t, r.Bytes, "pdftotext", "FILE", "-")
 	for _, want := range []string{"emoji �", "Ελληνικά", "tab new line", `\)((`} {
 		if !strings.Contains(text, want) {
 			t.Errorf("the page does not show %q", want)
@@ -176,10 +152,10 @@ func TestAttachmentsComeBackAndBookmarksStayRight(t *testing.T) {
 			d.NewPage()
 		}
 	})
-	if out := tool(t, r.Bytes, "qpdf", "--check", "FILE"); !strings.Contains(out, "No syntax or stream encoding errors") {
+	if out := pdftest.Tool(t, r.Bytes, "qpdf", "--check", "FILE"); !strings.Contains(out, "No syntax or stream encoding errors") {
 		t.Error(out)
 	}
-	js := tool(t, r.Bytes, "qpdf", "--json", "--json-key=outlines", "--json-key=attachments", "FILE")
+	js := pdftest.Tool(t, r.Bytes, "qpdf", "--json", "--json-key=outlines", "--json-key=attachments", "FILE")
 	dest := regexp.MustCompile(`"destpageposfrom1": (\w+)`).FindAllStringSubmatch(js, -1)
 	if len(dest) != 4 {
 		t.Fatalf("%d bookmarks:\n%s", len(dest), js)
@@ -191,7 +167,7 @@ func TestAttachmentsComeBackAndBookmarksStayRight(t *testing.T) {
 	}
 	for i, f := range s.Attachments {
 		out := filepath.Join(t.TempDir(), "out")
-		tool(t, r.Bytes, "pdfdetach", "-save", strconv.Itoa(i+1), "-o", out, "FILE")
+		pdftest.Tool(t, r.Bytes, "pdfdetach", "-save", strconv.Itoa(i+1), "-o", out, "FILE")
 		if got, err := os.ReadFile(out); err != nil || !bytes.Equal(got, f.Data) {
 			t.Errorf("%s came back changed (%v)", f.Name, err)
 		}
@@ -228,7 +204,7 @@ func TestSceneKeepsCapHeight(t *testing.T) {
 		drawing.Label{X: 20, Y: 20, Size: 2.5, Text: "right word", Anchor: drawing.Right, Turn: 90},
 	}}
 	r := build(t, setup(), func(d *Doc) { d.Scene(s, 30, 40) })
-	if text := tool(t, r.Bytes, "pdftotext", "FILE", "-"); !strings.Contains(text, "right word") {
+	if text := pdftest.Tool(t, r.Bytes, "pdftotext", "FILE", "-"); !strings.Contains(text, "right word") {
 		t.Error("the label is missing")
 	}
 	if e := ExtentOf(Regular, 'H'); math.Abs(e.Up-CapHeight) > 0.001 {
